@@ -1,0 +1,235 @@
+import type { Radians } from '../quantity/radians.js';
+
+/** Permanent-tide system (Mäkinen 2021; IERS Conventions 2010, section 1.1). */
+export type TideSystem = 'mean' | 'zero' | 'free';
+
+export type Distribution = 'normal' | 'uniform' | 'triangular' | 't';
+
+/** One piece of an input's standard uncertainty. `source` null: independent of everything else. */
+export interface UncertaintyPart {
+  /** standard uncertainty, SI, > 0 */
+  readonly u: number;
+  /** id of a shared error source, or null */
+  readonly source: string | null;
+}
+
+/** Text that may stand on any object of the file; kept and shown, never computed with. */
+export interface Remarks {
+  readonly note?: string;
+  readonly reference?: string;
+  readonly date?: string;
+}
+
+/** A measured number as stated in the file, in SI. */
+export interface Measured extends Remarks {
+  /** SI value as stated, before any tide or frame conversion */
+  readonly value: number;
+  /** combined standard uncertainty, SI; 0 if exact. u² = Σ parts².u */
+  readonly u: number;
+  /** pieces of u; empty if exact; pieces add as squares */
+  readonly parts: readonly UncertaintyPart[];
+  readonly distribution: Distribution;
+  /** degrees of freedom; null means infinitely many. For `t` it is the ν of JCGM 101 6.4.9 and u its scale */
+  readonly dof: number | null;
+  /** permanent-tide label as stated; null if none stands there */
+  readonly tide: TideSystem | null;
+  /** terrestrial reference frame of a height, epoch in decimal years, vertical rate in m/s */
+  readonly frame?: string;
+  readonly epochYear?: number;
+  readonly rateMPerS?: number;
+  /** the value as typed, for messages; null for a bare number */
+  readonly text: string | null;
+}
+
+export interface TimeInterval {
+  /** milliseconds since 1970-01-01T00:00:00Z (UTC without leap seconds, as in ISO 8601 arithmetic) */
+  readonly startMs: number;
+  readonly endMs: number;
+}
+
+export interface Source extends Remarks {
+  readonly id: string;
+  readonly name?: string;
+  /** correlation between different sites; exclusive with correlationLengthM */
+  readonly correlation?: number;
+  readonly correlationLengthM?: number;
+}
+
+export interface Datum extends Remarks {
+  readonly id: string;
+  readonly name?: string;
+  readonly W0: Measured;
+  /** benchmark that carries the datum */
+  readonly origin: { readonly latitudeRad: Radians; readonly longitudeRad: Radians | null } | null;
+  readonly estimateOffset: boolean;
+  readonly estimateTilt: boolean;
+  readonly frame?: string;
+  readonly epochYear?: number;
+}
+
+export interface Transition extends Remarks {
+  readonly id: string;
+  /** true over recommended frequency − 1; null if not stated */
+  readonly offset: Measured | null;
+  /** Hz, only for a transition that is not in the recommended list */
+  readonly frequency: Measured | null;
+}
+
+interface DeterminationCommon extends Remarks {
+  /** compared with the result, not fitted */
+  readonly check: boolean;
+  readonly candidate: boolean;
+  readonly cost: number | null;
+}
+
+/** A value read off a (quasi)geoid grid: the 4×4 nodes in use, or the file's name if they have not been resolved yet. */
+export interface GridReference {
+  readonly file: string;
+  readonly parts: readonly UncertaintyPart[];
+  readonly u: number;
+}
+
+export type Determination = DeterminationCommon &
+  (
+    | { readonly kind: 'potential'; readonly W: Measured }
+    | { readonly kind: 'geopotential-number'; readonly C: Measured; readonly datum: string }
+    | { readonly kind: 'normal-height'; readonly H: Measured; readonly datum: string; readonly field?: string }
+    | { readonly kind: 'normal-orthometric-height'; readonly H: Measured; readonly datum: string }
+    | {
+        readonly kind: 'orthometric-height';
+        readonly H: Measured;
+        readonly g: Measured | null;
+        readonly datum: string;
+      }
+    | {
+        readonly kind: 'dynamic-height';
+        readonly H: Measured;
+        readonly gammaRef: Measured | null;
+        readonly datum: string;
+      }
+    | {
+        readonly kind: 'gnss-quasigeoid';
+        readonly h: Measured | null;
+        readonly zeta: Measured;
+        readonly datum: string;
+      }
+    | {
+        readonly kind: 'gnss-geoid';
+        readonly h: Measured | null;
+        readonly N: Measured;
+        readonly g: Measured | null;
+        readonly meanGravityFactor: Measured | null;
+        readonly datum: string;
+      }
+    | {
+        readonly kind: 'levelled-from';
+        readonly site: string;
+        readonly dH: Measured;
+        readonly g: Measured | null;
+        /** levelled distance (m), random (m^½) and systematic (1) error of the line, if u(dH) is to come from them */
+        readonly lengthM?: number;
+        readonly b?: Measured;
+        readonly k?: Measured;
+      }
+    | { readonly kind: 'gravity-model'; readonly h: Measured | null; readonly W: Measured }
+  );
+
+export type DeterminationKind = Determination['kind'];
+
+export interface Site extends Remarks {
+  readonly id: string;
+  readonly name?: string;
+  /** geodetic, north positive, −π/2…π/2 */
+  readonly latitudeRad: Radians;
+  /** geodetic, east positive */
+  readonly longitudeRad: Radians;
+  readonly h: Measured | null;
+  /** gravity at the marker */
+  readonly g: Measured | null;
+  /** decrease of gravity with height, s⁻² */
+  readonly gradient: Measured | null;
+  /** loading, groundwater, air: added to W of the site's clocks, m²/s² */
+  readonly variable: Measured | null;
+  readonly determinations: readonly Determination[];
+  readonly candidate: boolean;
+  readonly cost: number | null;
+}
+
+export interface TieStep extends Remarks {
+  readonly name?: string;
+  /** height of the upper end over the lower, m; negative goes down */
+  readonly dH: Measured;
+}
+
+/** Allan deviations: white and phase at 1 s, flicker the floor. */
+export interface Stability {
+  readonly white: number;
+  readonly flicker: number;
+  readonly phase: number;
+}
+
+interface Instrument extends Remarks {
+  readonly id: string;
+  readonly name?: string;
+  /** pieces of the systematic relative frequency uncertainty */
+  readonly systematic: readonly (UncertaintyPart & { readonly dof: number | null; readonly name?: string })[];
+  readonly stability: Stability;
+  /** share of the time in 0…1; exclusive with `available` */
+  readonly uptime: number;
+  readonly available: readonly TimeInterval[] | null;
+  readonly candidate: boolean;
+  readonly cost: number | null;
+}
+
+export interface Clock extends Instrument {
+  readonly site: string;
+  readonly transition: string;
+  readonly tie: readonly TieStep[];
+}
+
+export interface Link extends Instrument {
+  /** clock ids; y is the offset of `to` seen from `from` */
+  readonly from: string;
+  readonly to: string;
+  readonly kind: string | null;
+  readonly lengthM: number | null;
+  /** unbroken stretches of the link */
+  readonly segments: number;
+}
+
+export interface Measurement extends Remarks {
+  readonly id: string | null;
+  readonly link: string;
+  readonly y: Measured;
+  readonly includesSystematic: boolean;
+  readonly check: boolean;
+  readonly startMs: number | null;
+  readonly endMs: number | null;
+}
+
+export interface MeasurementCorrelation {
+  /** measurement ids */
+  readonly between: readonly [string, string];
+  readonly rho: number;
+}
+
+/** A validated campaign: everything in SI and radians, ids resolved, immutable. */
+export interface Campaign extends Remarks {
+  readonly format: 'plumbtick-campaign/1';
+  readonly title?: string;
+  readonly tide: TideSystem;
+  readonly window: TimeInterval | null;
+  /** wanted standard uncertainty, as length equivalent, m */
+  readonly targetM: number | null;
+  /** discrepancy to be revealed, as length equivalent, m; null: 10 × target */
+  readonly effectM: number | null;
+  readonly love: { readonly h2: number; readonly k2: number };
+  readonly sources: readonly Source[];
+  readonly datums: readonly Datum[];
+  readonly transitions: readonly Transition[];
+  readonly sites: readonly Site[];
+  readonly clocks: readonly Clock[];
+  readonly links: readonly Link[];
+  readonly measurements: readonly Measurement[];
+  readonly correlations: readonly MeasurementCorrelation[];
+}
