@@ -1,54 +1,134 @@
+// Builds dist/: the library and the elements as ES modules, one classic script for a <script> tag, the command line,
+// the JSON Schema of the campaign file and one HTML page that works from disk. `--types` also writes the declarations.
+// Files are written beside and renamed, so that a page or a test never reads half of one.
+import { execFileSync } from 'node:child_process';
+import crypto from 'node:crypto';
 import fs from 'node:fs';
+import path from 'node:path';
+import { fileURLToPath, pathToFileURL } from 'node:url';
 import * as esbuild from 'esbuild';
 import { inlineWorker } from './esbuild-plugins.mjs';
 
+const root = fileURLToPath(new URL('..', import.meta.url));
+const dist = path.join(root, 'dist');
+const { version } = JSON.parse(fs.readFileSync(path.join(root, 'package.json'), 'utf8'));
+/** In a page that is not declared as UTF-8 the byte order mark is what keeps Δ and ² whole: tagged templates can't be escaped. */
+const byteOrderMark = '\uFEFF';
+
 const common = {
+  absWorkingDir: root,
   bundle: true,
+  write: false,
   target: 'es2022',
   charset: 'utf8',
-  legalComments: 'inline',
   logLevel: 'warning',
+  define: { __PLUMBTICK_VERSION__: JSON.stringify(version) },
   plugins: [inlineWorker],
-  metafile: true,
+  outdir: 'dist',
 };
-fs.rmSync('dist', { recursive: true, force: true });
-await Promise.all([
-  esbuild.build({
-    ...common,
-    entryPoints: { index: 'lib/index.ts', components: 'components/index.ts' },
-    outdir: 'dist',
-    format: 'esm',
-    packages: 'external',
-    splitting: true,
-    sourcemap: true,
-  }),
-  esbuild.build({
-    ...common,
-    entryPoints: ['components/index.ts'],
-    outfile: 'dist/plumbtick.js',
-    format: 'iife',
-    globalName: 'plumbtick',
-    minify: true,
-  }),
-  esbuild.build({
-    ...common,
-    entryPoints: ['lib/cli/index.ts'],
-    outfile: 'dist/cli.js',
-    format: 'esm',
-    platform: 'node',
-    target: 'node20',
-    banner: {
-      js: '#!/usr/bin/env node\nimport { createRequire as __cr } from "node:module"; const require = __cr(import.meta.url);',
-    },
-    minifySyntax: true,
-  }),
-]);
-fs.chmodSync('dist/cli.js', 0o755);
-const js = fs
-  .readFileSync('dist/plumbtick.js', 'utf8')
-  .replace(/<\/script/gi, '<\\/script')
-  .replace(/<!--/g, '<\\!--');
-fs.writeFileSync(
-  'dist/standalone.html',
-  `<!doctype html><html lang="en"><meta charset="utf-8"><title>Plumbtick</title><body><plumb-desk></plumb-desk><script>${js}</script></body></html>`,
-);
+
+/** Text of the self-contained page: the script inline, under a policy that allows this script alone and no request at all. */
+function standalonePage(script) {
+  const inline = script.replace(/<\/script/gi, '<\\/script').replace(/<!--/g, '<\\!--');
+  const hash = crypto.createHash('sha256').update(inline, 'utf8').digest('base64');
+  const template = fs.readFileSync(path.join(root, 'scripts', 'standalone.template.html'), 'utf8');
+  return template
+    .replace('{{script-hash}}', () => `sha256-${hash}`)
+    .replaceAll('{{version}}', () => version)
+    .replace('{{script}}', () => inline);
+}
+
+function write(file, contents, mode = 0o644) {
+  fs.mkdirSync(path.dirname(file), { recursive: true });
+  const beside = `${file}.${process.pid}.tmp`;
+  fs.writeFileSync(beside, contents, { mode });
+  fs.renameSync(beside, file);
+}
+
+function files(folder) {
+  if (!fs.existsSync(folder)) return [];
+  return fs.readdirSync(folder, { withFileTypes: true, recursive: true }).flatMap((entry) => {
+    return entry.isFile() ? [path.join(entry.parentPath, entry.name)] : [];
+  });
+}
+
+export async function build({ types = false } = {}) {
+  const results = await Promise.all([
+    esbuild.build({
+      ...common,
+      entryPoints: { index: 'lib/index.ts', components: 'components/index.ts' },
+      format: 'esm',
+      packages: 'external',
+      splitting: true,
+      sourcemap: true,
+      legalComments: 'inline',
+    }),
+    esbuild.build({
+      ...common,
+      entryPoints: { plumbtick: 'components/index.ts' },
+      format: 'iife',
+      globalName: 'plumbtick',
+      minify: true,
+      legalComments: 'eof',
+      external: ['geotiff'], // a hundred kilobytes that only the command line needs
+    }),
+    esbuild.build({
+      ...common,
+      entryPoints: { cli: 'lib/cli/index.ts' },
+      format: 'esm',
+      platform: 'node',
+      target: 'node20',
+      minifySyntax: true,
+      legalComments: 'inline',
+      external: ['geotiff'], // loaded from node_modules when a grid asks for it
+      banner: {
+        // bundled CommonJS packages may call require
+        js: '#!/usr/bin/env node\nimport { createRequire as __createRequire } from "node:module"; const require = __createRequire(import.meta.url);',
+      },
+    }),
+  ]);
+  const written = new Set();
+  const put = (file, contents, mode) => {
+    write(file, contents, mode);
+    written.add(file);
+  };
+  for (const { path: file, text } of results.flatMap((result) => result.outputFiles)) {
+    const name = path.basename(file);
+    if (name === 'plumbtick.js') {
+      put(file, byteOrderMark + text);
+      put(path.join(dist, 'standalone.html'), standalonePage(text));
+    } else put(file, text, name === 'cli.js' ? 0o755 : 0o644);
+  }
+  const { campaignJsonSchema } = await import(`${pathToFileURL(path.join(dist, 'index.js'))}?${Date.now()}`);
+  if (campaignJsonSchema !== undefined) {
+    const schema = typeof campaignJsonSchema === 'function' ? campaignJsonSchema() : campaignJsonSchema;
+    put(path.join(dist, 'plumbtick-campaign.schema.json'), `${JSON.stringify(schema, null, 2)}\n`);
+  }
+
+  const declarations = path.join(dist, 'types');
+  for (const file of files(dist))
+    if (!written.has(file) && !file.startsWith(declarations) && !file.endsWith('.tmp'))
+      fs.rmSync(file, { force: true });
+  if (types) {
+    fs.rmSync(declarations, { recursive: true, force: true });
+    execFileSync(process.execPath, [path.join(root, 'node_modules/typescript/bin/tsc'), '-p', 'tsconfig.build.json'], {
+      cwd: root,
+      stdio: 'inherit',
+    });
+  }
+  return [...written].sort();
+}
+
+if (process.argv[1] && pathToFileURL(process.argv[1]).href === import.meta.url) {
+  try {
+    const started = performance.now();
+    const written = await build({ types: process.argv.includes('--types') });
+    for (const file of written.filter((name) => !name.endsWith('.map')))
+      console.log(`${path.relative(root, file).padEnd(44)} ${String(fs.statSync(file).size).padStart(8)} B`);
+    console.log(`built ${version} in ${((performance.now() - started) / 1000).toFixed(1)} s`);
+  } catch (error) {
+    // esbuild and tsc have already said on standard error what is wrong and where
+    if (!error.errors && error.status === undefined) console.error(error);
+    process.exitCode = 1;
+  }
+}

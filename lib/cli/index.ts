@@ -1,0 +1,3 @@
+import { version } from '../constants/version.js';
+
+process.stdout.write(`${version}\n`);
