@@ -3,8 +3,8 @@ import { regularisedBeta } from './incomplete-beta.js';
 import { normalDensity, standardNormalCdf, standardNormalCentre, standardNormalQuantile } from './normal.js';
 import { stirlingError } from './saddle-point.js';
 
-/** Whether Hill's expansion is exact to 1e-15 for this t: its error is 8e-15·(t/6)¹¹·(1000/ν)⁶ from t = 2 on, measured
- *  against 40-digit values. The continued fraction is slow and less exact there. */
+/** Whether Hill's expansion is exact to 1e-14 for this t: its error is about 8e-15·(t/6)¹¹·(1000/ν)⁶ from t = 2 on, measured
+ *  against 40-digit values. The continued fraction is slow and no better there. */
 const isNearlyNormal = (t: number, nu: number): boolean => nu > 55 * Math.max(t, 2) ** (11 / 6);
 
 /** The normal deviate with the same tail as t on many degrees of freedom: G. W. Hill, Algorithm 395,
