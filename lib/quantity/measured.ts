@@ -1,0 +1,342 @@
+import { D, type Decimal, HALF_EVEN } from './decimal.js';
+import { KINDS, type QuantityKind } from './kinds.js';
+import { closest } from './near-match.js';
+import { parseQuantity } from './quantity.js';
+import { QuantityError, type QuantityFaultCode, shown } from './quantity-error.js';
+import { readUnit, toSi, type Unit } from './units.js';
+
+/** One thing wrong with a measured number. */
+export interface QuantityProblem {
+  readonly code: QuantityFaultCode;
+  /** where inside the input: '' the input itself, else `value`, `u`, `unit`, `source`, `parts.1.u`, … */
+  readonly at: string;
+  /** index from 0 into the text that stands at `at`; null where no character is to blame */
+  readonly position: number | null;
+  /** what stands there, ready for a message (texts in quotes) */
+  readonly found: string;
+  readonly expected: string;
+}
+
+export type DistributionName = 'normal' | 'uniform' | 'triangular' | 't';
+
+/** The numbers of a measured quantity, SI. Tide, frame and remarks are for the reader of the file. */
+export interface MeasuredNumbers {
+  readonly value: number;
+  /** combined standard uncertainty; 0 if exact */
+  readonly u: number;
+  /** pieces with u > 0; they add as squares to u. A single u is one piece. Empty if exact */
+  readonly parts: readonly { readonly u: number; readonly source: string | null }[];
+  readonly distribution: DistributionName;
+  readonly dof: number | null;
+  /** the value as typed; null for a bare number */
+  readonly text: string | null;
+}
+
+export type Read<T> =
+  | { readonly ok: true; readonly value: T }
+  | { readonly ok: false; readonly problems: readonly QuantityProblem[] };
+
+/** Keys of the object form that are read here; the others are the caller's. */
+export const MEASURED_KEYS = ['value', 'u', 'unit', 'source', 'parts', 'distribution', 'dof'] as const;
+/** Keys of one entry of `parts` that are read here. */
+export const PART_KEYS = ['u', 'source'] as const;
+
+const DISTRIBUTIONS: readonly DistributionName[] = ['normal', 'uniform', 'triangular', 't'];
+
+/** A number before its double is taken. */
+interface Exact {
+  readonly value: Decimal;
+  readonly double: number;
+  readonly u: Decimal | null;
+  readonly uDouble: number;
+  readonly uStep: Decimal | null;
+  readonly usedUnit: boolean;
+}
+
+class Problems {
+  readonly list: QuantityProblem[] = [];
+  add(code: QuantityFaultCode, at: string, input: unknown, expected: string, position: number | null = null): null {
+    this.list.push({ code, at, position, found: shown(input), expected });
+    return null;
+  }
+}
+
+/** A number or a text; null when refused. */
+const readNumber = (
+  input: unknown,
+  kind: QuantityKind,
+  unit: Unit | null,
+  at: string,
+  problems: Problems,
+): Exact | null => {
+  const { name, example } = KINDS[kind];
+  if (typeof input === 'number') {
+    if (!Number.isFinite(input)) return problems.add('not-finite', at, input, 'a finite number');
+    const typed = new D(input);
+    const value = unit === null ? typed : toSi(typed, unit);
+    const double = value.toNumber();
+    if (!Number.isFinite(double)) return problems.add('overflow', at, input, 'a magnitude below 1.8e308');
+    if (double === 0 && input !== 0) return problems.add('underflow', at, input, 'a magnitude above 5e-324, or 0');
+    const step = new D(`1e${-typed.decimalPlaces()}`);
+    return {
+      value,
+      double: double === 0 ? 0 : double,
+      u: null,
+      uDouble: 0,
+      uStep: unit === null ? step : toSi(step, unit),
+      usedUnit: unit !== null,
+    };
+  }
+  if (typeof input !== 'string') {
+    if (input === undefined) return problems.add('missing', at, input, `${name} such as ${example}`);
+    return problems.add('wrong-type', at, input, `${name}: a number or a text such as "${example}"`);
+  }
+  try {
+    const q = parseQuantity(input, kind, unit);
+    return {
+      value: q.decimal.value,
+      double: q.value,
+      u: q.decimal.u,
+      uDouble: q.u,
+      uStep: q.decimal.uStep,
+      usedUnit: unit !== null && !q.unitWritten,
+    };
+  } catch (error) {
+    if (!(error instanceof QuantityError)) throw error;
+    return problems.add(error.code, at, input, error.expected, error.position);
+  }
+};
+
+/** A standard uncertainty by itself; its step is that of its own last digit. */
+const readU = (input: unknown, kind: QuantityKind, unit: Unit | null, at: string, problems: Problems): Exact | null => {
+  const x = readNumber(input, kind, unit, at, problems);
+  if (x === null) return null;
+  if (x.u !== null)
+    return problems.add('two-uncertainties', at, input, 'a standard uncertainty without one of its own');
+  if (x.value.isNegative() && !x.value.isZero())
+    return problems.add('negative-u', at, input, 'a standard uncertainty, zero or positive');
+  return x;
+};
+
+const readSource = (input: unknown, at: string, problems: Problems): string | null => {
+  if (input === undefined) return null;
+  if (typeof input !== 'string' || input === '')
+    return problems.add('wrong-type', at, input, 'the id of an entry of "sources"');
+  return input;
+};
+
+const isObject = (input: unknown): input is Readonly<Record<string, unknown>> =>
+  typeof input === 'object' && input !== null && !Array.isArray(input);
+
+/** An own key of an object; undefined where it is absent (never something inherited). */
+const own = (object: Readonly<Record<string, unknown>>, key: string): unknown =>
+  Object.hasOwn(object, key) ? object[key] : undefined;
+
+interface Piece {
+  readonly u: Exact;
+  readonly source: string | null;
+}
+
+const readParts = (
+  input: unknown,
+  kind: QuantityKind,
+  unit: Unit | null,
+  problems: Problems,
+): readonly Piece[] | null => {
+  if (!Array.isArray(input) || input.length === 0)
+    return problems.add(
+      'wrong-type',
+      'parts',
+      input,
+      'a list of pieces, [{"u": "18 mm", "source": "…"}, {"u": "6 mm"}]',
+    );
+  const pieces: Piece[] = [];
+  const seen = new Map<string, number>();
+  let whole = true;
+  input.forEach((entry: unknown, i) => {
+    const at = `parts.${i}`;
+    if (!isObject(entry)) {
+      problems.add('wrong-type', at, entry, 'a piece such as {"u": "18 mm", "source": "…"}');
+      whole = false;
+      return;
+    }
+    const typed = own(entry, 'u');
+    // The object's unit could be meant, or the default one.
+    if (unit !== null && typeof typed === 'number' && !(unit.numerator.eq(1) && unit.denominator.eq(1))) {
+      problems.add(
+        'ambiguous-unit',
+        `${at}.u`,
+        typed,
+        `a text with its unit: "${typed} ${unit.text}" or "${typed} ${KINDS[kind].unit}"`,
+      );
+      whole = false;
+      return;
+    }
+    const u = readU(typed, kind, null, `${at}.u`, problems);
+    const source = readSource(own(entry, 'source'), `${at}.source`, problems);
+    if (source !== null) {
+      const first = seen.get(source);
+      if (first !== undefined)
+        problems.add(
+          'source-twice',
+          `${at}.source`,
+          source,
+          `each source once; it stands at parts.${first} already (add the two as squares)`,
+        );
+      seen.set(source, first ?? i);
+    }
+    if (u === null) whole = false;
+    else pieces.push({ u, source });
+  });
+  return whole ? pieces : null;
+};
+
+/** Root of the sum of squares, to 40 digits so that the last one of a stated u can be judged. */
+const combined = (pieces: readonly Piece[]): Decimal =>
+  pieces
+    .reduce((sum, p) => sum.plus(p.u.value.times(p.u.value)), new D(0))
+    .toSignificantDigits(80)
+    .sqrt();
+
+/** Whether a stated u is `exact` rounded to the stated last digit (a tie may go either way). */
+const agrees = (stated: Decimal, step: Decimal, exact: Decimal): boolean => stated.minus(exact).abs().lte(step.div(2));
+
+const readObject = (
+  input: Readonly<Record<string, unknown>>,
+  kind: QuantityKind,
+  problems: Problems,
+): MeasuredNumbers | null => {
+  let unit: Unit | null = null;
+  const unitText = own(input, 'unit');
+  if (unitText !== undefined) {
+    if (typeof unitText !== 'string')
+      problems.add('wrong-type', 'unit', unitText, `a unit as text, "${KINDS[kind].unit}"`);
+    else
+      try {
+        unit = readUnit(unitText, kind);
+      } catch (error) {
+        if (!(error instanceof QuantityError)) throw error;
+        problems.add(error.code, 'unit', unitText, error.expected, error.position);
+      }
+  }
+  const typed = own(input, 'value');
+  const value = readNumber(typed, kind, unit, 'value', problems);
+  const uTyped = own(input, 'u');
+  const u = uTyped === undefined ? null : readU(uTyped, kind, unit, 'u', problems);
+  if (unit !== null && value !== null && !value.usedUnit && u?.usedUnit !== true)
+    problems.add('unit-twice', 'unit', unitText, 'the unit once, in the text or here');
+  const partsTyped = own(input, 'parts');
+  const parts = partsTyped === undefined ? null : readParts(partsTyped, kind, unit, problems);
+  const source = readSource(own(input, 'source'), 'source', problems);
+  if (source !== null && partsTyped !== undefined)
+    problems.add('source-beside-parts', 'source', source, 'the source in the pieces, not beside "parts"');
+
+  // Up to three statements of one u: the bracket, "u" and "parts". The finest one stands, the others must agree with it.
+  const bracket = value !== null && value.u !== null ? { at: 'value', typed, u: value.u, step: value.uStep! } : null;
+  const single = u === null ? null : { at: 'u', typed: uTyped, u: u.value, step: u.uStep! };
+  if (parts !== null) {
+    const exact = combined(parts);
+    for (const s of [bracket, single])
+      if (s !== null && !agrees(s.u, s.step, exact))
+        problems.add(
+          'u-disagrees',
+          s.at,
+          s.typed,
+          `the root of the sum of squares of "parts", ${exact.toSignificantDigits(3, HALF_EVEN)} ${KINDS[kind].unit}`,
+        );
+  } else if (
+    bracket !== null &&
+    single !== null &&
+    !agrees(bracket.u, bracket.step, single.u) &&
+    !agrees(single.u, single.step, bracket.u)
+  )
+    problems.add('u-disagrees', 'u', uTyped, 'one uncertainty, in the bracket or here');
+
+  const distribution = readDistribution(own(input, 'distribution'), problems);
+  const dof = readDof(own(input, 'dof'), problems);
+  if (distribution === 't' && dof === null && own(input, 'dof') === undefined)
+    problems.add('dof-missing', 'dof', undefined, 'degrees of freedom beside "distribution": "t"');
+  if (problems.list.length > 0 || value === null || distribution === null) return null;
+
+  const one = u !== null ? u.double : value.uDouble;
+  const pieces = parts !== null ? parts.map((p) => ({ u: p.u.double, source: p.source })) : [{ u: one, source }];
+  const kept = pieces.filter((p) => p.u > 0);
+  return {
+    value: value.double,
+    u: kept.length === 1 ? kept[0]!.u : Math.hypot(...kept.map((p) => p.u)),
+    parts: kept,
+    distribution,
+    dof,
+    text: typeof typed === 'string' ? typed : null,
+  };
+};
+
+const readDistribution = (input: unknown, problems: Problems): DistributionName | null => {
+  if (input === undefined) return 'normal';
+  const name = DISTRIBUTIONS.find((d) => d === input);
+  if (name !== undefined) return name;
+  const near = typeof input === 'string' ? closest(input, DISTRIBUTIONS) : null;
+  return problems.add(
+    'unknown-distribution',
+    'distribution',
+    input,
+    `one of ${DISTRIBUTIONS.join(', ')}${near === null ? '' : `; did you mean ${near}?`}`,
+  );
+};
+
+const readDof = (input: unknown, problems: Problems): number | null => {
+  if (input === undefined) return null;
+  if (typeof input !== 'number' || !Number.isFinite(input) || input <= 0)
+    return problems.add(
+      'bad-dof',
+      'dof',
+      input,
+      'degrees of freedom: a finite number above 0 (left out: infinitely many)',
+    );
+  return input;
+};
+
+/** Reads a measured number in any form: number, text, or object with `value`, `u`, `unit`, `source`, `parts`,
+ *  `distribution`, `dof`. Other keys of the object are left to the caller. All problems at once.
+ *
+ *  `unit` is that of `value` and `u` where they are numbers or texts without one. `parts[].u` carries its own unit or has the
+ *  default one; a bare number there beside a `unit` that is not the default is refused as ambiguous. Pieces with u = 0 are left
+ *  out. A bracket or `u` beside `parts` must be their root sum of squares rounded to its last digit; u is then that of
+ *  the parts. */
+export const readMeasured = (input: unknown, kind: QuantityKind): Read<MeasuredNumbers> => {
+  const problems = new Problems();
+  let measured: MeasuredNumbers | null = null;
+  if (isObject(input)) measured = readObject(input, kind, problems);
+  else {
+    const x = readNumber(input, kind, null, '', problems);
+    if (x !== null)
+      measured = {
+        value: x.double,
+        u: x.uDouble,
+        parts: x.uDouble > 0 ? [{ u: x.uDouble, source: null }] : [],
+        distribution: 'normal',
+        dof: null,
+        text: typeof input === 'string' ? input : null,
+      };
+  }
+  return measured === null ? { ok: false, problems: problems.list } : { ok: true, value: measured };
+};
+
+/** Reads a number that carries no uncertainty (a length of fibre, a target, a duration): number or text, SI.
+ *  Sign and range are the caller's. */
+export const readExact = (input: unknown, kind: QuantityKind): Read<number> => {
+  const problems = new Problems();
+  const x = readNumber(input, kind, null, '', problems);
+  if (x !== null && x.u !== null)
+    problems.add('uncertainty-not-expected', '', input, 'a number without an uncertainty');
+  return x === null || problems.list.length > 0
+    ? { ok: false, problems: problems.list }
+    : { ok: true, value: x.double };
+};
+
+/** Reads a standard uncertainty (a systematic, an Allan deviation): number or text, ≥ 0, SI. */
+export const readStandardUncertainty = (input: unknown, kind: QuantityKind): Read<number> => {
+  const problems = new Problems();
+  const x = readU(input, kind, null, '', problems);
+  return x === null ? { ok: false, problems: problems.list } : { ok: true, value: x.double };
+};
