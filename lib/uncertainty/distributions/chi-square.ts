@@ -55,7 +55,8 @@ const fromTail = (tail: 'lower' | 'upper', probability: number, nu: number): num
     const p = regularisedGamma(a, x / 2)[tail];
     const step = (-sign * p * Math.log(p / probability)) / (a * poissonTerm(a, x / 2));
     const next = x * Math.exp(Math.max(-2, Math.min(2, step)));
-    if (Math.abs(step) < 1e-14) return next;
+    // Newton squares the error: what is left is below rounding. A smaller bound could be missed for ever.
+    if (Math.abs(step) < 1e-10) return next;
     x = next;
   }
   return x;

@@ -4,33 +4,30 @@ import { binomialTerm } from './saddle-point.js';
 const TINY = 1e-300;
 const EPSILON = 2 ** -53;
 
-/** a·B(a,b)·I_x(a,b)/(xᵃ·yᵇ) by the continued fraction DLMF 8.17.22, modified Lentz method; for x < (a+1)/(a+b+2). */
-const continuedFraction = (a: number, b: number, x: number): number => {
-  let c = 1;
-  let d = 1 - ((a + b) * x) / (a + 1);
-  if (Math.abs(d) < TINY) d = TINY;
-  d = 1 / d;
+/** B(a,b)·I_x(a,b)/(xᵃ·yᵇ) for x < (a+1)/(a+b+2): the even part of the continued fraction DLMF 8.17.22, in the form of
+ *  DiDonato & Morris, ACM TOMS 18 (1992) 360–373, eq. (10), by the modified Lentz method. With λ taken from the
+ *  smaller of x and y nothing cancels at x ≈ 1, where the fraction itself loses a factor a of the last digit. */
+const continuedFraction = (a: number, b: number, x: number, y: number): number => {
+  const lambda = x < y ? a - (a + b) * x : (a + b) * y - b; // equal, but for cancellation
+  let denominator = (a / (a + 1)) * (lambda + 1);
+  let c = 1 / TINY;
+  let d = 1 / denominator;
   let h = d;
-  // The factors approach 1 geometrically: where the first is 1 to rounding after m steps, the product of those to come is
-  // still m/37 roundings away from 1; m/4 further steps bring it below one.
+  // The factors approach 1 geometrically: where the first is 1 to rounding after n steps, the product of those to come is
+  // still n/37 roundings away from 1; n/4 further steps bring it below one.
   let last = Infinity;
-  for (let m = 1; m < last; m++) {
-    const even = (m * (b - m) * x) / ((a + 2 * m - 1) * (a + 2 * m));
-    d = 1 + even * d;
+  for (let n = 1; n < last; n++) {
+    const p = a + 2 * n - 1;
+    const numerator = (((a + n - 1) * x) / p) * (((a + b + n - 1) * x) / p) * n * (b - n);
+    denominator = n + (n * (b - n) * x) / p + ((a + n) / (p + 2)) * (lambda + 1 + n * (1 + y));
+    d = denominator + numerator * d;
     if (Math.abs(d) < TINY) d = TINY;
-    c = 1 + even / c;
-    if (Math.abs(c) < TINY) c = TINY;
-    d = 1 / d;
-    h *= d * c;
-    const odd = (-(a + m) * (a + b + m) * x) / ((a + 2 * m) * (a + 2 * m + 1));
-    d = 1 + odd * d;
-    if (Math.abs(d) < TINY) d = TINY;
-    c = 1 + odd / c;
+    c = denominator + numerator / c;
     if (Math.abs(c) < TINY) c = TINY;
     d = 1 / d;
     const step = d * c;
     h *= step;
-    if (last === Infinity && Math.abs(step - 1) <= 4 * EPSILON) last = m + m / 4 + 1;
+    if (last === Infinity && Math.abs(step - 1) <= 4 * EPSILON) last = n + n / 4 + 1;
   }
   return h;
 };
@@ -54,12 +51,12 @@ export const regularisedBeta = (
   }
   if (x === 0) return { lower: 0, upper: 1 };
   if (y === 0) return { lower: 1, upper: 0 };
-  const term = binomialTerm(a, b, x, y);
-  // xᵃ·yᵇ/(a·B(a,b)) = b/(a+b) · Γ(a+b+1)/(Γ(a+1)Γ(b+1)) · xᵃ·yᵇ
+  // xᵃ·yᵇ/B(a,b) = a·b/(a+b) · Γ(a+b+1)/(Γ(a+1)Γ(b+1)) · xᵃ·yᵇ
+  const term = binomialTerm(a, b, x, y) * a * (b / (a + b));
   if (x < (a + 1) / (a + b + 2)) {
-    const lower = term * (b / (a + b)) * continuedFraction(a, b, x);
+    const lower = term * continuedFraction(a, b, x, y);
     return { lower, upper: 1 - lower };
   }
-  const upper = term * (a / (a + b)) * continuedFraction(b, a, y);
+  const upper = term * continuedFraction(b, a, y, x);
   return { lower: 1 - upper, upper };
 };
