@@ -5,7 +5,7 @@ const TINY = 1e-300;
 const EPSILON = 2 ** -53;
 
 /** B(a,b)·I_x(a,b)/(xᵃ·yᵇ) for x < (a+1)/(a+b+2): the even part of the continued fraction DLMF 8.17.22, in the form of
- *  DiDonato & Morris, ACM TOMS 18 (1992) 360–373, eq. (10), by the modified Lentz method. With λ taken from the
+ *  DiDonato & Morris, ACM TOMS 18 (1992) 360–373 (their BFRAC), by the modified Lentz method. With λ taken from the
  *  smaller of x and y nothing cancels at x ≈ 1, where the fraction itself loses a factor a of the last digit. */
 const continuedFraction = (a: number, b: number, x: number, y: number): number => {
   const lambda = x < y ? a - (a + b) * x : (a + b) * y - b; // equal, but for cancellation
@@ -13,10 +13,7 @@ const continuedFraction = (a: number, b: number, x: number, y: number): number =
   let c = 1 / TINY;
   let d = 1 / denominator;
   let h = d;
-  // The factors approach 1 geometrically: where the first is 1 to rounding after n steps, the product of those to come is
-  // still n/37 roundings away from 1; n/4 further steps bring it below one.
-  let last = Infinity;
-  for (let n = 1; n < last; n++) {
+  for (let n = 1; ; n++) {
     const p = a + 2 * n - 1;
     const numerator = (((a + n - 1) * x) / p) * (((a + b + n - 1) * x) / p) * n * (b - n);
     denominator = n + (n * (b - n) * x) / p + ((a + n) / (p + 2)) * (lambda + 1 + n * (1 + y));
@@ -27,9 +24,9 @@ const continuedFraction = (a: number, b: number, x: number, y: number): number =
     d = 1 / d;
     const step = d * c;
     h *= step;
-    if (last === Infinity && Math.abs(step - 1) <= 4 * EPSILON) last = n + n / 4 + 1;
+    // Not EPSILON: the factor can hover one rounding off 1 for ever.
+    if (Math.abs(step - 1) <= 4 * EPSILON) return h;
   }
-  return h;
 };
 
 /** Regularised incomplete beta function I_x(a, b) and its complement, each to its own relative accuracy

@@ -24,7 +24,8 @@ const continuedFraction = (a: number, x: number): number => {
   let c = 1 / TINY;
   let d = 1 / b;
   let h = d;
-  // m/4 steps beyond the first factor that is 1 to rounding: see incomplete-beta.ts.
+  // The factors approach 1 geometrically: where the first is 1 to rounding after i steps, the product of those to come is
+  // still i/37 roundings away from 1; i/4 further steps bring it below one.
   let last = Infinity;
   for (let i = 1; i < last; i++) {
     const an = -i * (i - a);
