@@ -1,1 +1,7 @@
+/** All elements of Plumbtick, registered; for one alone take its own `….define.js`. */
+import './floors/plumb-floors.define.js';
+
 export { version } from '../lib/constants/version.js';
+export { PlumbFloors } from './floors/plumb-floors.js';
+export { PlumbElement } from './plumb-element.js';
+export type { PlumbChange } from './shared/article-element.js';

@@ -275,13 +275,18 @@ export const sharedStyles = css`
     }
     .field {
       min-height: 38px;
-      font-size: 16px;
     }
     .word {
       min-width: 44px;
       min-height: 38px;
       padding: 9px 0;
       margin: -9px 0;
+    }
+  }
+  @media (pointer: coarse) {
+    /* smaller type makes a phone zoom in on the field */
+    .field {
+      font-size: 16px;
     }
   }
   @media print {

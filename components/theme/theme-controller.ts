@@ -2,6 +2,12 @@ import type { ReactiveController, ReactiveControllerHost } from 'lit';
 
 export type Theme = 'light' | 'dark';
 
+/** Palette, and whether the element has to paint its own paper because the page's ground would not carry it. */
+export interface Surroundings {
+  readonly theme: Theme;
+  readonly ownGround: boolean;
+}
+
 type Host = ReactiveControllerHost & HTMLElement;
 
 const mounted = new Set<ThemeController>();
@@ -40,25 +46,46 @@ const lightness = (color: string): number | null => {
   return alpha < 0.5 ? null : (0.2126 * red + 0.7152 * green + 0.0722 * blue) / 255;
 };
 
-/** Which palette fits the place where the element stands: the nearest `data-theme`; else the page's own evidence, its
- *  `color-scheme` or the ground it paints; else what the reader's system prefers. */
-const themeAt = (element: Element): Theme => {
+/** Grounds on which the palettes keep their contrast: nearly white, nearly black. */
+const LIGHT_ENOUGH = 0.93;
+const DARK_ENOUGH = 0.13;
+
+const statedTheme = (element: Element): Theme | null => {
   for (let node: Element | null = element; node; node = parentOf(node)) {
     const stated = node.getAttribute('data-theme');
     if (stated === 'light' || stated === 'dark') return stated;
   }
-  for (let node: Element | null = parentOf(element); node; node = parentOf(node)) {
-    const ground = lightness(getComputedStyle(node).backgroundColor);
-    if (ground !== null) return ground < 0.5 ? 'dark' : 'light';
+  return null;
+};
+
+const pageGround = (element: Element): number | null => {
+  for (let node = parentOf(element); node; node = parentOf(node)) {
+    const { backgroundColor, backgroundImage } = getComputedStyle(node);
+    const ground = lightness(backgroundColor);
+    if (ground !== null) return ground;
+    if (backgroundImage !== 'none') return null;
   }
+  return null;
+};
+
+/** Which palette fits the place where the element stands: the nearest `data-theme`; else the page's own evidence, the ground
+ *  it paints or its `color-scheme`; else what the reader's system prefers. */
+const surroundingsOf = (element: Element): Surroundings => {
+  const ground = pageGround(element);
   const scheme = getComputedStyle(element).colorScheme;
-  if (scheme === 'light' || scheme === 'dark') return scheme;
-  return prefersDark.matches ? 'dark' : 'light';
+  const theme =
+    statedTheme(element) ??
+    (ground !== null ? (ground < 0.5 ? 'dark' : 'light') : null) ??
+    (scheme === 'light' || scheme === 'dark' ? scheme : null) ??
+    (prefersDark.matches ? 'dark' : 'light');
+  const carried = ground !== null && (theme === 'light' ? ground >= LIGHT_ENOUGH : ground <= DARK_ENOUGH);
+  return { theme, ownGround: !carried };
 };
 
 /** Keeps the palette of an element in step with the page round it. */
 export class ThemeController implements ReactiveController {
   theme: Theme = 'light';
+  ownGround = true;
   readonly #host: Host;
 
   constructor(host: Host) {
@@ -78,9 +105,10 @@ export class ThemeController implements ReactiveController {
   }
 
   update(): void {
-    const next = themeAt(this.#host);
-    if (next === this.theme) return;
-    this.theme = next;
+    const { theme, ownGround } = surroundingsOf(this.#host);
+    if (theme === this.theme && ownGround === this.ownGround) return;
+    this.theme = theme;
+    this.ownGround = ownGround;
     this.#host.requestUpdate();
   }
 }

@@ -73,7 +73,6 @@ export const tokens = css`
     --p-quick: var(--plumb-quick, 120ms);
 
     color-scheme: light;
-    background: var(--p-paper);
     color: var(--p-ink);
     font-family: var(--p-font-text);
     font-size: var(--p-size-4);
@@ -81,6 +80,10 @@ export const tokens = css`
     font-variant-numeric: lining-nums tabular-nums;
     text-rendering: optimizeLegibility;
     container: plumb / inline-size;
+  }
+
+  .plumb.own {
+    background: var(--p-paper);
   }
 
   .plumb.dark {
@@ -98,6 +101,12 @@ export const tokens = css`
     --p-caution: var(--plumb-caution, #e3b65c);
     --p-fault: var(--plumb-fault, #ff9078);
     color-scheme: dark;
+  }
+
+  /* In an article: the page's own typeface. An undefined custom property makes font-family fall back to inheritance. */
+  .plumb.article {
+    --p-font-text: var(--plumb-font-text);
+    --p-font-figure: var(--plumb-font-figure);
   }
 
   @media (prefers-reduced-motion: reduce) {
@@ -130,6 +139,7 @@ export const tokens = css`
 
   @media print {
     .plumb,
+    .plumb.own,
     .plumb.dark {
       --p-paper: #ffffff;
       --p-wash: #ffffff;
@@ -149,6 +159,7 @@ export const tokens = css`
       --p-size-6: 20px;
       --p-size-7: 30px;
       color-scheme: light;
+      background: none;
       print-color-adjust: exact;
       -webkit-print-color-adjust: exact;
     }

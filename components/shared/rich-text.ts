@@ -1,0 +1,26 @@
+import { html, type TemplateResult } from 'lit';
+import { quantityText } from './number.js';
+
+/** A line that is both shown and copied: words, italic symbols, numbers with their digits grouped. */
+export type RichPart = string | { readonly symbol: string; readonly sub?: string } | { readonly number: string };
+export type RichText = readonly RichPart[];
+
+/** Symbol of a quantity, in italics: `sym('W', '0')`. */
+export const sym = (symbol: string, sub?: string): RichPart => (sub === undefined ? { symbol } : { symbol, sub });
+/** A formatted number, with its unit if it has one. */
+export const num = (number: string): RichPart => ({ number });
+
+/** As words for the clipboard, a title or a screen reader's label. */
+export const plainText = (parts: RichText): string =>
+  parts
+    .map((part) => (typeof part === 'string' ? part : 'number' in part ? part.number : part.symbol + (part.sub ?? '')))
+    .join('');
+
+export const richText = (parts: RichText): TemplateResult =>
+  html`${parts.map((part) => {
+    if (typeof part === 'string') return part;
+    if ('number' in part) return quantityText(part.number);
+    return part.sub === undefined
+      ? html`<i class="s">${part.symbol}</i>`
+      : html`<i class="s">${part.symbol}</i><sub>${part.sub}</sub>`;
+  })}`;
