@@ -1,21 +1,9 @@
 import { D, type Decimal, HALF_EVEN } from './decimal.js';
 import { KINDS, type QuantityKind } from './kinds.js';
 import { closest } from './near-match.js';
-import { parseQuantity } from './quantity.js';
-import { QuantityError, type QuantityFaultCode, shown } from './quantity-error.js';
-import { readUnit, toSi, type Unit } from './units.js';
-
-/** One thing wrong with a measured number. */
-export interface QuantityProblem {
-  readonly code: QuantityFaultCode;
-  /** where inside the input: '' the input itself, else `value`, `u`, `unit`, `source`, `parts.1.u`, … */
-  readonly at: string;
-  /** index from 0 into the text that stands at `at`; null where no character is to blame */
-  readonly position: number | null;
-  /** what stands there, ready for a message (texts in quotes) */
-  readonly found: string;
-  readonly expected: string;
-}
+import { type Exact, Problems, type Read, readNumber, readU, refuseBare } from './number-input.js';
+import { QuantityError } from './quantity-error.js';
+import { readUnit, type Unit } from './units.js';
 
 export type DistributionName = 'normal' | 'uniform' | 'triangular' | 't';
 
@@ -32,91 +20,12 @@ export interface MeasuredNumbers {
   readonly text: string | null;
 }
 
-export type Read<T> =
-  | { readonly ok: true; readonly value: T }
-  | { readonly ok: false; readonly problems: readonly QuantityProblem[] };
-
 /** Keys of the object form that are read here; the others are the caller's. */
 export const MEASURED_KEYS = ['value', 'u', 'unit', 'source', 'parts', 'distribution', 'dof'] as const;
 /** Keys of one entry of `parts` that are read here. */
 export const PART_KEYS = ['u', 'source'] as const;
 
 const DISTRIBUTIONS: readonly DistributionName[] = ['normal', 'uniform', 'triangular', 't'];
-
-/** A number before its double is taken. */
-interface Exact {
-  readonly value: Decimal;
-  readonly double: number;
-  readonly u: Decimal | null;
-  readonly uDouble: number;
-  readonly uStep: Decimal | null;
-  readonly usedUnit: boolean;
-}
-
-class Problems {
-  readonly list: QuantityProblem[] = [];
-  add(code: QuantityFaultCode, at: string, input: unknown, expected: string, position: number | null = null): null {
-    this.list.push({ code, at, position, found: shown(input), expected });
-    return null;
-  }
-}
-
-/** A number or a text; null when refused. */
-const readNumber = (
-  input: unknown,
-  kind: QuantityKind,
-  unit: Unit | null,
-  at: string,
-  problems: Problems,
-): Exact | null => {
-  const { name, example } = KINDS[kind];
-  if (typeof input === 'number') {
-    if (!Number.isFinite(input)) return problems.add('not-finite', at, input, 'a finite number');
-    const typed = new D(input);
-    const value = unit === null ? typed : toSi(typed, unit);
-    const double = value.toNumber();
-    if (!Number.isFinite(double)) return problems.add('overflow', at, input, 'a magnitude below 1.8e308');
-    if (double === 0 && input !== 0) return problems.add('underflow', at, input, 'a magnitude above 5e-324, or 0');
-    const step = new D(`1e${-typed.decimalPlaces()}`);
-    return {
-      value,
-      double: double === 0 ? 0 : double,
-      u: null,
-      uDouble: 0,
-      uStep: unit === null ? step : toSi(step, unit),
-      usedUnit: unit !== null,
-    };
-  }
-  if (typeof input !== 'string') {
-    if (input === undefined) return problems.add('missing', at, input, `${name} such as ${example}`);
-    return problems.add('wrong-type', at, input, `${name}: a number or a text such as "${example}"`);
-  }
-  try {
-    const q = parseQuantity(input, kind, unit);
-    return {
-      value: q.decimal.value,
-      double: q.value,
-      u: q.decimal.u,
-      uDouble: q.u,
-      uStep: q.decimal.uStep,
-      usedUnit: unit !== null && !q.unitWritten,
-    };
-  } catch (error) {
-    if (!(error instanceof QuantityError)) throw error;
-    return problems.add(error.code, at, input, error.expected, error.position);
-  }
-};
-
-/** A standard uncertainty by itself; its step is that of its own last digit. */
-const readU = (input: unknown, kind: QuantityKind, unit: Unit | null, at: string, problems: Problems): Exact | null => {
-  const x = readNumber(input, kind, unit, at, problems);
-  if (x === null) return null;
-  if (x.u !== null)
-    return problems.add('two-uncertainties', at, input, 'a standard uncertainty without one of its own');
-  if (x.value.isNegative() && !x.value.isZero())
-    return problems.add('negative-u', at, input, 'a standard uncertainty, zero or positive');
-  return x;
-};
 
 const readSource = (input: unknown, at: string, problems: Problems): string | null => {
   if (input === undefined) return null;
@@ -161,14 +70,8 @@ const readParts = (
       return;
     }
     const typed = own(entry, 'u');
-    // The object's unit could be meant, or the default one.
-    if (unit !== null && typeof typed === 'number' && !(unit.numerator.eq(1) && unit.denominator.eq(1))) {
-      problems.add(
-        'ambiguous-unit',
-        `${at}.u`,
-        typed,
-        `a text with its unit: "${typed} ${unit.text}" or "${typed} ${KINDS[kind].unit}"`,
-      );
+    const bare = refuseBare(typed, kind, unit, `${at}.u`, problems);
+    if (bare) {
       whole = false;
       return;
     }
@@ -191,12 +94,17 @@ const readParts = (
   return whole ? pieces : null;
 };
 
-/** Root of the sum of squares, to 40 digits so that the last one of a stated u can be judged. */
+/** Root of the sum of squares, in decimals so that the last digit of a stated u can be judged. */
 const combined = (pieces: readonly Piece[]): Decimal =>
-  pieces
-    .reduce((sum, p) => sum.plus(p.u.value.times(p.u.value)), new D(0))
-    .toSignificantDigits(80)
-    .sqrt();
+  pieces.reduce((sum, p) => sum.plus(p.u.value.times(p.u.value)), new D(0)).sqrt();
+
+/** The same in doubles, scaled by the largest so that squares of 1e-170 do not vanish. */
+const rootSumOfSquares = (us: readonly number[]): number => {
+  const largest = us.reduce((max, u) => Math.max(max, u), 0);
+  return largest === 0 ? 0 : largest * Math.sqrt(us.reduce((sum, u) => sum + (u / largest) ** 2, 0));
+};
+
+const sameUnit = (a: Unit, b: Unit): boolean => a.numerator.times(b.denominator).eq(b.numerator.times(a.denominator));
 
 /** Whether a stated u is `exact` rounded to the stated last digit (a tie may go either way). */
 const agrees = (stated: Decimal, step: Decimal, exact: Decimal): boolean => stated.minus(exact).abs().lte(step.div(2));
@@ -222,19 +130,21 @@ const readObject = (
   const typed = own(input, 'value');
   const value = readNumber(typed, kind, unit, 'value', problems);
   const uTyped = own(input, 'u');
-  const u = uTyped === undefined ? null : readU(uTyped, kind, unit, 'u', problems);
-  if (unit !== null && value !== null && !value.usedUnit && u?.usedUnit !== true)
+  const uBare = unit === null && refuseBare(uTyped, kind, value?.written ?? null, 'u', problems);
+  const u = uTyped === undefined || uBare ? null : readU(uTyped, kind, unit, 'u', problems);
+  const repeated = unit !== null && value?.written != null && sameUnit(unit, value.written);
+  if (unit !== null && value !== null && !value.usedUnit && u?.usedUnit !== true && !repeated)
     problems.add('unit-twice', 'unit', unitText, 'the unit once, in the text or here');
   const partsTyped = own(input, 'parts');
-  const parts = partsTyped === undefined ? null : readParts(partsTyped, kind, unit, problems);
+  const parts = partsTyped === undefined ? null : readParts(partsTyped, kind, value?.written ?? unit, problems);
   const source = readSource(own(input, 'source'), 'source', problems);
   if (source !== null && partsTyped !== undefined)
     problems.add('source-beside-parts', 'source', source, 'the source in the pieces, not beside "parts"');
 
-  // Up to three statements of one u: the bracket, "u" and "parts". The finest one stands, the others must agree with it.
+  // Up to three statements of one u: "parts" stands, else "u", else the bracket; the others must agree with it.
   const bracket = value !== null && value.u !== null ? { at: 'value', typed, u: value.u, step: value.uStep! } : null;
-  const single = u === null ? null : { at: 'u', typed: uTyped, u: u.value, step: u.uStep! };
-  if (parts !== null) {
+  const single = u === null ? null : { at: 'u', typed: uTyped, u: u.value, step: u.step };
+  if (parts !== null && (bracket !== null || single !== null)) {
     const exact = combined(parts);
     for (const s of [bracket, single])
       if (s !== null && !agrees(s.u, s.step, exact))
@@ -242,9 +152,13 @@ const readObject = (
           'u-disagrees',
           s.at,
           s.typed,
-          `the root of the sum of squares of "parts", ${exact.toSignificantDigits(3, HALF_EVEN)} ${KINDS[kind].unit}`,
+          `the root of the sum of squares of "parts", ${exact.toSignificantDigits(3, HALF_EVEN)} ${KINDS[kind].unit}`.replace(
+            / 1$/,
+            '',
+          ),
         );
   } else if (
+    parts === null &&
     bracket !== null &&
     single !== null &&
     !agrees(bracket.u, bracket.step, single.u) &&
@@ -263,7 +177,7 @@ const readObject = (
   const kept = pieces.filter((p) => p.u > 0);
   return {
     value: value.double,
-    u: kept.length === 1 ? kept[0]!.u : Math.hypot(...kept.map((p) => p.u)),
+    u: rootSumOfSquares(kept.map((p) => p.u)),
     parts: kept,
     distribution,
     dof,
@@ -300,9 +214,9 @@ const readDof = (input: unknown, problems: Problems): number | null => {
  *  `distribution`, `dof`. Other keys of the object are left to the caller. All problems at once.
  *
  *  `unit` is that of `value` and `u` where they are numbers or texts without one. `parts[].u` carries its own unit or has the
- *  default one; a bare number there beside a `unit` that is not the default is refused as ambiguous. Pieces with u = 0 are left
- *  out. A bracket or `u` beside `parts` must be their root sum of squares rounded to its last digit; u is then that of
- *  the parts. */
+ *  default one. A u without a unit beside a value in another unit than the default is refused as ambiguous, unless `unit` says
+ *  what it is. Pieces with u = 0 are left out. A bracket or `u` beside `parts` must be their root sum of squares rounded to
+ *  its last digit; u is then that of the parts. */
 export const readMeasured = (input: unknown, kind: QuantityKind): Read<MeasuredNumbers> => {
   const problems = new Problems();
   let measured: MeasuredNumbers | null = null;
@@ -320,23 +234,4 @@ export const readMeasured = (input: unknown, kind: QuantityKind): Read<MeasuredN
       };
   }
   return measured === null ? { ok: false, problems: problems.list } : { ok: true, value: measured };
-};
-
-/** Reads a number that carries no uncertainty (a length of fibre, a target, a duration): number or text, SI.
- *  Sign and range are the caller's. */
-export const readExact = (input: unknown, kind: QuantityKind): Read<number> => {
-  const problems = new Problems();
-  const x = readNumber(input, kind, null, '', problems);
-  if (x !== null && x.u !== null)
-    problems.add('uncertainty-not-expected', '', input, 'a number without an uncertainty');
-  return x === null || problems.list.length > 0
-    ? { ok: false, problems: problems.list }
-    : { ok: true, value: x.double };
-};
-
-/** Reads a standard uncertainty (a systematic, an Allan deviation): number or text, ≥ 0, SI. */
-export const readStandardUncertainty = (input: unknown, kind: QuantityKind): Read<number> => {
-  const problems = new Problems();
-  const x = readU(input, kind, null, '', problems);
-  return x === null ? { ok: false, problems: problems.list } : { ok: true, value: x.double };
 };

@@ -28,16 +28,16 @@ export const closest = (word: string, candidates: readonly string[]): string | n
   const lower = word.toLowerCase();
   const limit = Math.min(MAX_DISTANCE, Math.floor(word.length / 2));
   let best: string | null = null;
-  let bestDistance = limit + 1;
+  let bestDistance = Number.POSITIVE_INFINITY;
   for (const candidate of candidates) {
     if (candidate === word) return candidate;
     if (Math.abs(candidate.length - word.length) > MAX_DISTANCE) continue;
-    // Half an edit for case: of two candidates equally far, the one in the word's own case is nearer.
+    const caseless = editDistance(lower, candidate.toLowerCase());
+    if (caseless > limit) continue;
+    // Of two equally far, the nearer is the one in the word's own case, then the one of its own length.
     const d =
-      candidate.toLowerCase() === lower
-        ? 0.5
-        : Math.min(editDistance(word, candidate), editDistance(lower, candidate.toLowerCase()) + 0.5);
-    if (d < bestDistance && (d < 1 || Math.ceil(d) <= limit)) {
+      4 * caseless + (caseless < editDistance(word, candidate) ? 2 : 0) + (candidate.length === word.length ? 0 : 1);
+    if (d < bestDistance) {
       best = candidate;
       bestDistance = d;
     }

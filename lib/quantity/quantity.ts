@@ -13,8 +13,13 @@ export interface Quantity {
   readonly value: number;
   /** standard uncertainty, SI; 0 where none was written */
   readonly u: number;
-  /** the same without rounding; `u` null where none was written, `uStep` the size of its last written digit */
-  readonly decimal: { readonly value: Decimal; readonly u: Decimal | null; readonly uStep: Decimal | null };
+  /** the same without rounding, `u` null where none was written; the steps are the sizes of their last written digits */
+  readonly decimal: {
+    readonly value: Decimal;
+    readonly step: Decimal;
+    readonly u: Decimal | null;
+    readonly uStep: Decimal | null;
+  };
   /** unit as written, else the default unit */
   readonly unit: string;
   /** whether a unit was written */
@@ -64,11 +69,17 @@ const scanTerm = (text: string, from: number): Term => {
 /** What stands in the text before any unit is applied. */
 interface Reading {
   readonly value: Decimal;
+  readonly step: Decimal;
   readonly u: Decimal | null;
   readonly uStep: Decimal | null;
   readonly valueUnit: Unit | null;
   readonly uUnit: Unit | null;
+  /** where each number starts, for messages */
+  readonly valueAt: number;
+  readonly uAt: number;
 }
+
+const NO_U = { u: null, uStep: null, uUnit: null } as const;
 
 /** `143.216(8)e-3 m` from its number on. */
 const readConcise = (text: string, kind: QuantityKind, from: number): Reading | { readonly term: Term } => {
@@ -96,10 +107,13 @@ const readConcise = (text: string, kind: QuantityKind, from: number): Reading | 
   const uExponent = bracket.hasPoint ? exponent : exponent - term.token.decimals;
   return {
     value: decimalOf(term.token, exponent),
+    step: stepOf(term.token, exponent),
     u: decimalOf(bracket, uExponent),
     uStep: stepOf(bracket, uExponent),
     valueUnit: next < text.length ? readUnit(text, kind, next) : null,
     uUnit: null,
+    valueAt: term.token.start,
+    uAt: bracket.start,
   };
 };
 
@@ -122,7 +136,11 @@ const readPlusMinus = (text: string, kind: QuantityKind, term: Term): Reading =>
   const sign = findPlusMinus(text, next);
   const valueUnit = next < sign ? readUnit(text, kind, next, sign) : null;
   const value = decimalOf(term.token, term.exponent);
-  if (sign === text.length) return { value, u: null, uStep: null, valueUnit, uUnit: null };
+  const step = stepOf(term.token, term.exponent);
+  if (sign === text.length) {
+    const { start } = term.token;
+    return { ...NO_U, value, step, valueUnit, valueAt: start, uAt: start };
+  }
   const uTerm = scanTerm(text, sign + plusMinusLength(text, sign));
   refuseNegative(text, uTerm);
   refuseLostBrackets(text, term, uTerm);
@@ -135,10 +153,13 @@ const readPlusMinus = (text: string, kind: QuantityKind, term: Term): Reading =>
     bad('unit-missing', text, text.length, `a unit after the uncertainty too, or only there (${valueUnit.text})`);
   return {
     value,
+    step,
     u: decimalOf(uTerm.token, uTerm.exponent),
     uStep: stepOf(uTerm.token, uTerm.exponent),
     valueUnit: valueUnit ?? uUnit,
     uUnit,
+    valueAt: term.token.start,
+    uAt: uTerm.token.start,
   };
 };
 
@@ -163,10 +184,13 @@ const readGrouped = (text: string, kind: QuantityKind, open: number): Reading =>
   const next = skipSpaces(text, power?.end ?? close + 1);
   return {
     value: decimalOf(value.token, value.exponent + shift),
+    step: stepOf(value.token, value.exponent + shift),
     u: decimalOf(u.token, u.exponent + shift),
     uStep: stepOf(u.token, u.exponent + shift),
     valueUnit: next < text.length ? readUnit(text, kind, next) : null,
     uUnit: null,
+    valueAt: value.token.start,
+    uAt: u.token.start,
   };
 };
 
@@ -189,7 +213,14 @@ const parseStrictly = (text: string, kind: QuantityKind, ambient: Unit | null): 
   let reading: Reading;
   if (kind === 'duration' && text[start] === 'P') {
     const value = parseIsoDuration(trimmed, start);
-    reading = { value, u: null, uStep: null, valueUnit: defaultUnit(kind), uUnit: null };
+    reading = {
+      ...NO_U,
+      value,
+      step: new D(`1e${-value.decimalPlaces()}`),
+      valueUnit: defaultUnit(kind),
+      valueAt: start,
+      uAt: start,
+    };
   } else if (text[start] === '(') {
     reading = readGrouped(trimmed, kind, start);
   } else {
@@ -202,10 +233,11 @@ const parseStrictly = (text: string, kind: QuantityKind, ambient: Unit | null): 
   const u = reading.u === null ? null : toSi(reading.u, uUnit);
   return {
     kind,
-    value: toDouble(value, text, start),
-    u: u === null ? 0 : toDouble(u, text, start),
+    value: toDouble(value, text, reading.valueAt),
+    u: u === null ? 0 : toDouble(u, text, reading.uAt),
     decimal: {
       value: value.isZero() ? new D(0) : value,
+      step: toSi(reading.step, valueUnit),
       u,
       uStep: reading.uStep === null ? null : toSi(reading.uStep, uUnit),
     },

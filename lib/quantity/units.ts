@@ -49,8 +49,8 @@ interface UnitSymbol {
   readonly prefixed?: true;
 }
 
-/** m, s, Hz: SI Brochure table 2 and 4. min, h, d: table 8. Gal: 1 cm/s² (ISO 80000-3; SI Brochure, 8th ed., table 9).
- *  gpu, the geopotential unit: 1 kGal·m = 10 m²/s² (Heiskanen & Moritz 1967, section 4-1). E, the eötvös: 1e-9 s⁻².
+/** m, s, Hz: SI Brochure, 9th ed. (2019), tables 2 and 4; min, h, d: table 8; Gal = 1 cm/s²: note beside table 8.
+ *  gpu, the geopotential unit: 1 kGal·m (NGS, program DYNAMIC_HT; Heiskanen & Moritz 1967, ch. 4). E, the eötvös: 1e-9 s⁻².
  *  a, yr: the Julian year of 365.25 d, in which rates of stations are given (IAU Style Manual, Wilkins 1989, 5.15). */
 const SYMBOLS: Readonly<Record<string, UnitSymbol>> = {
   m: { factor: '1', length: 1, time: 0, prefixed: true },
@@ -86,11 +86,14 @@ const symbolValue = (word: string): SymbolValue | null => {
 
 const isLetter = (c: string | undefined): boolean => c !== undefined && /^[A-Za-zµμ°%'"′″Ω]$/.test(c);
 
+/** So many are named in a message; the others are there to be guessed at. */
+const SHOWN_UNITS = 4;
+
 const expectation = (kind: QuantityKind): string => {
   const k = KINDS[kind];
   return k.units.length === 0
     ? 'no unit: the field is a plain number'
-    : `a unit of ${k.name.replace(/^an? /, '')}: ${k.units.join(', ')}`;
+    : `a unit of ${k.name.replace(/^an? /, '')}: ${k.units.slice(0, SHOWN_UNITS).join(', ')}`;
 };
 
 /** Exponent after a symbol, doubled: ², ^2, ^-2, ⁻², ½, ^½, ^0.5, ^(1/2), or a bare digit as in s-2. */
@@ -123,8 +126,8 @@ export const readUnit = (text: string, kind: QuantityKind, from = 0, to = text.l
   const unitText = text.slice(start, end);
   const { dimension: wanted, units } = KINDS[kind];
   const unknown = (at: number): never => {
-    const near = closest(unitText, units);
-    const hint = near === null || near === unitText ? '' : `; did you mean ${near}?`;
+    const near = at === start || text[at] === '/' ? closest(unitText, units) : null;
+    const hint = near === null ? '' : `; did you mean ${near}?`;
     throw new QuantityError('unknown-unit', text, at, expectation(kind) + hint);
   };
   if (unitText === '1' && wanted.length2 === 0 && wanted.time2 === 0) return defaultUnit(kind);
@@ -150,6 +153,7 @@ export const readUnit = (text: string, kind: QuantityKind, from = 0, to = text.l
       if (value === null) {
         if (read > 0 && !under && isSpace(text[first - 1]))
           throw new QuantityError('stray-text', text, first, `nothing after ${text.slice(start, first).trimEnd()}`);
+        if (word === '') throw new QuantityError('stray-text', text, first, 'nothing but a unit after the number');
         return unknown(first);
       }
       if (root === 5) {
@@ -177,7 +181,8 @@ export const readUnit = (text: string, kind: QuantityKind, from = 0, to = text.l
       const dot = '·⋅*'.includes(text[gap]!);
       // m/s·m could mean two things.
       if (under || (!dot && gap === i)) {
-        if (gap > i && !dot) throw new QuantityError('stray-text', text, gap, `nothing after ${text.slice(start, i)}`);
+        if (!dot && (gap > i || !isLetter(text[gap])))
+          throw new QuantityError('stray-text', text, gap, `nothing after ${text.slice(start, i)}`);
         unknown(gap);
       }
       i = dot ? skipSpaces(text, gap + 1) : gap;
@@ -193,6 +198,9 @@ export const readUnit = (text: string, kind: QuantityKind, from = 0, to = text.l
   }
   return { numerator, denominator, dimension, text: unitText };
 };
+
+/** Whether a number in this unit is the SI number. */
+export const isSi = (unit: Unit): boolean => unit.numerator.eq(1) && unit.denominator.eq(1);
 
 /** The unit a number without one has. */
 export const defaultUnit = (kind: QuantityKind): Unit => ({
