@@ -1,43 +1,16 @@
 import type { Campaign } from '../campaign/campaign.js';
 import type { Warning } from '../campaign/fault.js';
 import { frequencyOfTransitionHz } from '../clocks/transition-frequency.js';
-import { buildModel } from '../model/build-model.js';
 import type { DeterminationObservation, Model } from '../model/model.js';
-import { hasLevel, type SitePotentials, solveSitePotentials } from '../model/site-potentials.js';
+import { hasLevel } from '../model/site-potentials.js';
 import { contributions } from '../uncertainty/budget.js';
 import { chiSquareUpperTail } from '../uncertainty/distributions/index.js';
-import { combineGradients, type Dependent } from '../uncertainty/gradient.js';
+import type { Dependent } from '../uncertainty/gradient.js';
+import { allChecks, potentialByDetermination } from './checks.js';
 import { combinationWarnings, groupWarnings } from './predict-warnings.js';
-import type { BudgetRow, CheckResult, Prediction } from './prediction.js';
-import {
-  clockPotential,
-  difference,
-  estimateOf,
-  type LinkQuantities,
-  linkQuantities,
-  redshiftAgainstTT,
-  scaled,
-} from './quantities.js';
-
-/** A campaign solved for its potentials: what every answer starts from. */
-export interface SolvedCampaign {
-  readonly model: Model;
-  readonly potentials: SitePotentials;
-  /** W at the atoms, per clock */
-  readonly clocks: readonly Dependent[];
-  /** per link; null where its ends have no common level */
-  readonly links: readonly (LinkQuantities | null)[];
-}
-
-/** Builds the model and solves it.
- * @throws {CampaignError} */
-export function solveCampaign(campaign: Campaign): SolvedCampaign {
-  const model = buildModel(campaign);
-  const potentials = solveSitePotentials(model);
-  const clocks = campaign.clocks.map((_, i) => clockPotential(model, potentials, i));
-  const links = campaign.links.map((l) => linkQuantities(model, potentials, clocks, l));
-  return { model, potentials, clocks, links };
-}
+import type { BudgetRow, Prediction } from './prediction.js';
+import { difference, estimateOf, redshiftAgainstTT, scaled } from './quantities.js';
+import { type SolvedCampaign, solveCampaign } from './solve-campaign.js';
 
 /** What offset gravity alone produces between each pair of clocks, how sure that is, and which input limits it.
  *  Sites and dW in the campaign's permanent-tide system; y and redshift always in mean tide, which is what a clock feels.
@@ -56,7 +29,12 @@ export function predictionOf(solved: SolvedCampaign): Prediction {
     C: level[s] ? estimate(difference(model.referencePotential[s]!, potentials.sites[s]!)) : null,
     determinations: model.determinations.flatMap((d) =>
       d.site === s
-        ? [{ kind: site.determinations[indexInSite(d)]!.kind, W: level[s] ? estimate(wOf(d, potentials)) : null }]
+        ? [
+            {
+              kind: site.determinations[indexInSite(d)]!.kind,
+              W: level[s] ? estimate(potentialByDetermination(d, potentials)) : null,
+            },
+          ]
         : [],
     ),
   }));
@@ -100,7 +78,7 @@ export function predictionOf(solved: SolvedCampaign): Prediction {
     combination,
     clocks,
     links,
-    checks: determinationChecks(model, potentials),
+    checks: allChecks(solved),
     correlations: correlationsOfOffsets(solved),
     warnings,
   };
@@ -108,40 +86,12 @@ export function predictionOf(solved: SolvedCampaign): Prediction {
 
 const indexInSite = (d: DeterminationObservation): number => Number(d.path.slice(d.path.lastIndexOf('.') + 1));
 
-/** W that one determination alone gives; levelling starts from the other site's result. */
-function wOf(d: DeterminationObservation, potentials: SitePotentials): Dependent {
-  if (d.from === null) return d;
-  const other = potentials.sites[d.from]!;
-  return {
-    value: other.value + d.value,
-    gradient: combineGradients([
-      [1, other.gradient],
-      [1, d.gradient],
-    ]),
-  };
-}
-
 export function budgetOf(model: Model, y: Dependent): BudgetRow[] {
   return contributions(model.covariance, y.gradient).map(({ input, ...row }) => {
     const { path, value, u } = model.inputs[input]!;
     return { input: path, value, u, ...row };
   });
 }
-
-/** Determinations with `"use": "check"` against the fit. */
-export function determinationChecks(model: Model, potentials: SitePotentials): CheckResult[] {
-  return model.determinations
-    .filter((d) => d.check)
-    .flatMap((d) => {
-      const comparable = d.from === null ? hasLevel(potentials, d.site) : sharedLevel(potentials, d.site, d.from);
-      if (!comparable) return [];
-      const residual = estimateOf(model.covariance, difference(wOf(d, potentials), potentials.sites[d.site]!));
-      return [{ path: d.path, residual, z: residual.u > 0 ? residual.value / residual.u : null }];
-    });
-}
-
-const sharedLevel = (p: SitePotentials, a: number, b: number): boolean =>
-  p.groups.groupOfSite[a] === p.groups.groupOfSite[b] || (hasLevel(p, a) && hasLevel(p, b));
 
 function correlationsOfOffsets({ model, links }: SolvedCampaign): Prediction['correlations'] {
   const known = links.flatMap((q, i) => (q ? [{ id: model.campaign.links[i]!.id, gradient: q.y.gradient }] : []));

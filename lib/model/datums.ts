@@ -1,14 +1,13 @@
 import type { Campaign, Datum } from '../campaign/campaign.js';
 import { W0_IHRS, W0_TT } from '../constants/defining-constants.js';
-import { GRS80 } from '../earth/level-ellipsoid.js';
 import type { Radians } from '../quantity/radians.js';
 import { type Dependent, gradientOf } from '../uncertainty/gradient.js';
 import type { InputRegister } from '../uncertainty/inputs.js';
 import { placeWithoutPosition, registerMeasured } from './site-inputs.js';
 import type { TideConverter } from './tide-labels.js';
 
-/** Reference potentials every campaign can name, all exact, m²/s². `u0-grs80` is printed U₀ of GRS80 (Moritz 2000), for ζ or N
- *  from a model without the zero-degree term W₀ − U₀. */
+/** Reference potentials every campaign can name, all exact, m²/s². `u0-grs80` is the printed U₀ of the 1980 reference system
+ *  (Moritz 2000), for ζ or N from a model without the zero-degree term W₀ − U₀. */
 export const BUILT_IN_W0_M2S2: Readonly<Record<string, number>> = {
   ihrs: W0_IHRS.value,
   'u0-grs80': 62_636_860.85,

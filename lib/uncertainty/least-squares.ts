@@ -37,7 +37,9 @@ export interface LeastSquaresSolution {
   readonly weights: {
     /** Cholesky factor of V of the independent observations */
     readonly factor: Matrix;
-    /** V⁻¹·B, B the design of the independent observations in the unknowns left free by exact relations */
+    /** B: design of the independent observations in the unknowns left free by exact relations */
+    readonly reducedDesign: Matrix;
+    /** V⁻¹·B */
     readonly weightedDesign: Matrix;
     /** Cholesky factor of N = Bᵀ·V⁻¹·B */
     readonly normalFactor: Matrix;
@@ -133,7 +135,7 @@ export function leastSquares(problem: LeastSquaresProblem): LeastSquaresSolution
     chi2: white.reduce((s, row) => s + row[0]! * row[0]!, 0),
     dof: independent.length + rank - n,
     independent,
-    weights: { factor, weightedDesign, normalFactor },
+    weights: { factor, reducedDesign: b, weightedDesign, normalFactor },
   };
 }
 
