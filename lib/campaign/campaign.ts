@@ -6,7 +6,7 @@ export type TideSystem = 'mean' | 'zero' | 'free';
 export type Distribution = 'normal' | 'uniform' | 'triangular' | 't';
 
 /** One piece of an input's standard uncertainty. `source` null: independent of everything else. */
-export interface UncertaintyPart {
+export interface UncertaintyPart extends Remarks {
   /** standard uncertainty, SI, > 0 */
   readonly u: number;
   /** id of a shared error source, or null */
@@ -41,7 +41,7 @@ export interface Measured extends Remarks {
   readonly text: string | null;
 }
 
-export interface TimeInterval {
+export interface TimeInterval extends Remarks {
   /** milliseconds since 1970-01-01T00:00:00Z (UTC without leap seconds, as in ISO 8601 arithmetic) */
   readonly startMs: number;
   readonly endMs: number;
@@ -60,7 +60,7 @@ export interface Datum extends Remarks {
   readonly name?: string;
   readonly W0: Measured;
   /** benchmark that carries the datum */
-  readonly origin: { readonly latitudeRad: Radians; readonly longitudeRad: Radians | null } | null;
+  readonly origin: (Remarks & { readonly latitudeRad: Radians; readonly longitudeRad: Radians | null }) | null;
   readonly estimateOffset: boolean;
   readonly estimateTilt: boolean;
   readonly frame?: string;
@@ -162,7 +162,7 @@ export interface TieStep extends Remarks {
 }
 
 /** Allan deviations: white and phase at 1 s, flicker the floor. */
-export interface Stability {
+export interface Stability extends Remarks {
   readonly white: number;
   readonly flicker: number;
   readonly phase: number;
@@ -174,8 +174,10 @@ interface Instrument extends Remarks {
   /** pieces of the systematic relative frequency uncertainty */
   readonly systematic: readonly (UncertaintyPart & { readonly dof: number | null; readonly name?: string })[];
   readonly stability: Stability;
-  /** share of the time in 0…1; exclusive with `available` */
+  /** share of the time in 0…1. Where `available` is stated: the share of the window that the intervals cover, without a window
+   *  the share of their own span */
   readonly uptime: number;
+  /** measured intervals in order of time, those that touch or overlap joined; null where none are stated */
   readonly available: readonly TimeInterval[] | null;
   readonly candidate: boolean;
   readonly cost: number | null;
@@ -207,7 +209,7 @@ export interface Measurement extends Remarks {
   readonly endMs: number | null;
 }
 
-export interface MeasurementCorrelation {
+export interface MeasurementCorrelation extends Remarks {
   /** measurement ids */
   readonly between: readonly [string, string];
   readonly rho: number;
@@ -223,7 +225,7 @@ export interface Campaign extends Remarks {
   readonly targetM: number | null;
   /** discrepancy to be revealed, as length equivalent, m; null: 10 × target */
   readonly effectM: number | null;
-  readonly love: { readonly h2: number; readonly k2: number };
+  readonly love: Remarks & { readonly h2: number; readonly k2: number };
   readonly sources: readonly Source[];
   readonly datums: readonly Datum[];
   readonly transitions: readonly Transition[];

@@ -1,0 +1,48 @@
+import type { Campaign } from './campaign.js';
+import { CampaignError, type Warning } from './fault.js';
+import { parseJsonText } from './json-text.js';
+import { type JsonNode, JsonTextError, jsonTreeOf } from './json-tree.js';
+import { checkCampaign } from './read/checks.js';
+import { doubts } from './read/doubts.js';
+import { rootContext } from './read/node.js';
+import { Reading, TooManyFaults } from './read/reading.js';
+import { campaignSchema } from './schema/campaign-schema.js';
+import { toCampaign } from './to-campaign.js';
+import { formatIsReadable } from './versions.js';
+
+export interface ReadCampaign {
+  readonly campaign: Campaign;
+  readonly warnings: readonly Warning[];
+}
+
+/** Reads and validates a campaign file.
+ * @param text JSON; a byte order mark at its beginning is passed over
+ * @throws {CampaignError} with every fault, in the order of the file, each with line and column */
+export const readCampaign = (text: string): ReadCampaign => read(text, () => parseJsonText(text));
+
+/** Reads and validates a campaign that is already in memory, as JSON.parse would have given it.
+ * @throws {CampaignError} with every fault; line and column are null */
+export const readCampaignValue = (value: unknown): ReadCampaign => read(null, () => jsonTreeOf(value));
+
+function read(text: string | null, tree: () => JsonNode): ReadCampaign {
+  const reading = new Reading(text);
+  try {
+    const file = readTree(tree(), reading);
+    if (file !== undefined && !reading.hasFaults)
+      return { campaign: toCampaign(file), warnings: doubts(file, reading.uses) };
+  } catch (error) {
+    if (error instanceof JsonTextError) {
+      const { code, start, found, expected } = error.fault;
+      reading.add(code, '', { type: 'null', start }, found, expected);
+    } else if (!(error instanceof TooManyFaults)) throw error;
+  }
+  throw new CampaignError(reading.faults());
+}
+
+function readTree(root: JsonNode, reading: Reading) {
+  const context = rootContext(reading);
+  if (!formatIsReadable(root, context)) return undefined;
+  const file = context.read(campaignSchema, root, context);
+  if (file !== undefined) checkCampaign(file, reading);
+  return file;
+}

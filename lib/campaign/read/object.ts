@@ -1,0 +1,142 @@
+import { quoted } from '../json-text.js';
+import type { JsonNode, JsonObject } from '../json-tree.js';
+import type {
+  Descriptor,
+  Keys,
+  ListDescriptor,
+  ObjectDescriptor,
+  ReadOf,
+  VariantDescriptor,
+} from '../schema/descriptor.js';
+import { unbuilt } from '../schema/unbuilt.js';
+import { type Context, inside, refuse } from './context.js';
+import { ownMembers, suggestion } from './keys.js';
+
+/** The keys of an object. What could be read is returned even where other keys were refused, so that checks across the
+ *  file see as much as possible; whether the file is good the reading knows. */
+export function readObject<K extends Keys>(
+  descriptor: ObjectDescriptor<K>,
+  node: JsonNode,
+  context: Context,
+  variantKey?: string,
+): ReadOf<ObjectDescriptor<K>> | undefined {
+  if (node.type !== 'object')
+    return refuse(context, node, 'wrong-type', `a ${descriptor.name}: an object with ${requiredKeys(descriptor)}`);
+  const { keys, name } = descriptor;
+  const allowed: Keys = variantKey === undefined ? keys : { [variantKey]: keys['note'] as Keys[string], ...keys };
+  const members = ownMembers(node, name, allowed, descriptor.refused, context);
+  // a key that is not built yet may stand in for others (a position for lat and lon): their lack is no fault beside it
+  const complete = ![...node.members.keys()].some((key) => unbuilt.has(`${name}.${key}`));
+  const here = descriptor.atSite ? { ...context, atSite: true } : context;
+  const result: Record<string, unknown> = {};
+  for (const [key, { descriptor: inner, required, help }] of Object.entries(keys)) {
+    const member = members.get(key);
+    if (member !== undefined) {
+      const read = here.read(inner, member.value, inside(here, key));
+      if (read !== undefined) result[key] = read;
+    } else if (required && complete && !node.members.has(key))
+      refuse(inside(context, key), node, 'missing-key', `${quoted(key)}: ${help}`, 'nothing');
+  }
+  checkPairs(descriptor, node, result, context);
+  context.reading.remember(result, { path: context.path, node });
+  return result as ReadOf<ObjectDescriptor<K>>;
+}
+
+function requiredKeys({ keys }: ObjectDescriptor<Keys>): string {
+  const needed = Object.keys(keys).filter((key) => keys[key]?.required);
+  return (needed.length > 0 ? needed : Object.keys(keys).slice(0, 3)).map((key) => quoted(key)).join(', ');
+}
+
+function checkPairs(
+  descriptor: ObjectDescriptor<Keys>,
+  node: JsonObject,
+  result: Readonly<Record<string, unknown>>,
+  context: Context,
+): void {
+  const { reading } = context;
+  const at = (key: string): JsonNode => node.members.get(key)?.value ?? node;
+  const path = (key: string): string => inside(context, key).path;
+  for (const [a, b] of descriptor.exclusive)
+    if (node.members.has(a) && node.members.has(b)) {
+      const second = (node.members.get(a)?.keyStart ?? 0) > (node.members.get(b)?.keyStart ?? 0) ? a : b;
+      const start = node.members.get(second)?.keyStart;
+      reading.add('exclusive-keys', path(second), node, `${quoted(a)} and ${quoted(b)}`, 'one of them', start);
+    }
+  for (const [a, b] of descriptor.needs)
+    if (node.members.has(a) && !node.members.has(b))
+      reading.add('missing-key', path(b), node, 'nothing', `${quoted(b)} beside ${quoted(a)}`);
+  for (const [a, b] of descriptor.ordered) {
+    const [from, to] = [result[a], result[b]];
+    if (typeof from === 'number' && typeof to === 'number' && from >= to)
+      reading.add(
+        'wrong-order',
+        path(b),
+        at(b),
+        reading.show(at(b)),
+        `later than ${quoted(a)}, ${reading.show(at(a))}`,
+      );
+  }
+  for (const [a, b] of descriptor.distinct)
+    if (typeof result[a] === 'string' && result[a] === result[b])
+      reading.add('self-reference', path(b), at(b), reading.show(at(b)), `another one than ${quoted(a)}`);
+}
+
+/** One of several kinds of object, told apart by a key. */
+export function readVariant<V extends Readonly<Record<string, ObjectDescriptor<Keys>>>>(
+  { variants, by, name }: VariantDescriptor<V>,
+  node: JsonNode,
+  context: Context,
+): ReadOf<VariantDescriptor<V>> | undefined {
+  const kinds = Object.keys(variants).filter((k) => !unbuilt.has(`${name}=${k}`));
+  if (node.type !== 'object') return refuse(context, node, 'wrong-type', `a ${name}: an object with ${quoted(by)}`);
+  const at = inside(context, by);
+  const kind = node.members.get(by)?.value;
+  if (kind === undefined) return refuse(at, node, 'missing-key', `${quoted(by)}, ${suggestion('', kinds)}`, 'nothing');
+  if (kind.type !== 'string') return refuse(at, kind, 'wrong-type', suggestion('', kinds));
+  if (unbuilt.has(`${name}=${kind.value}`))
+    return refuse(
+      at,
+      kind,
+      'not-built',
+      `another ${by}: this one is part of the format, but this version does not compute it yet`,
+    );
+  const variant = Object.hasOwn(variants, kind.value) ? variants[kind.value] : undefined;
+  if (variant === undefined) return refuse(at, kind, 'not-one-of', suggestion(kind.value, kinds));
+  const read = readObject(variant, node, context, by);
+  if (read === undefined) return undefined;
+  const whole = { ...read, [by]: kind.value };
+  context.reading.remember(whole, { path: context.path, node });
+  return whole as unknown as ReadOf<VariantDescriptor<V>>;
+}
+
+/** The items of a list. Refused items are left out; the reading knows of them. */
+export function readList<D extends Descriptor>(
+  { item, pathBy, length }: ListDescriptor<D>,
+  node: JsonNode,
+  context: Context,
+): readonly ReadOf<D>[] | undefined {
+  const { min, max } = length;
+  const size = min === max ? `a list of ${min}` : min > 0 ? `a list with at least ${min}` : 'a list: [ … ]';
+  if (node.type !== 'array') return refuse(context, node, 'wrong-type', size);
+  if (node.items.length < min || node.items.length > max) return refuse(context, node, 'wrong-length', size);
+  const items: ReadOf<D>[] = [];
+  const ids = new Set<string>();
+  for (const [i, child] of node.items.entries()) {
+    const id = pathBy === 'id' ? idOf(child) : null;
+    // of two items with one id the second is named by its position, so that a path means one place
+    const step = id === null || ids.has(id) ? i : id;
+    if (id !== null) ids.add(id);
+    const owner =
+      id !== null && item.type === 'object' && item.keys['id']
+        ? { list: item.keys['id'].descriptor.list, id }
+        : context.owner;
+    const read = context.read(item, child, { ...inside(context, step), owner, key: context.key });
+    if (read !== undefined) items.push(read as ReadOf<D>);
+  }
+  return items;
+}
+
+function idOf(node: JsonNode): string | null {
+  const id = node.type === 'object' ? node.members.get('id')?.value : undefined;
+  return id?.type === 'string' && id.value !== '' && id.value.length <= 100 ? id.value : null;
+}

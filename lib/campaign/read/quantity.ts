@@ -1,0 +1,236 @@
+import { type QuantityProblem, readExact, readMeasured, readStandardUncertainty } from '../../quantity/index.js';
+import type { Measured, UncertaintyPart } from '../campaign.js';
+import type { JsonNode, JsonObject } from '../json-tree.js';
+import {
+  type Keys,
+  type ObjectDescriptor,
+  type PieceOf,
+  type PiecesDescriptor,
+  type QuantityDescriptor,
+  type Range,
+  type ReadOf,
+  remarks,
+  type ScalarDescriptor,
+} from '../schema/descriptor.js';
+import { quantityKeys, READ_TOGETHER, scalarKeys } from '../schema/quantity-form.js';
+import { unbuilt } from '../schema/unbuilt.js';
+import { type Context, inside, refuse } from './context.js';
+import { ownMembers } from './keys.js';
+import { isInRange, rangeInWords } from './range.js';
+
+/** A measured number in any of its forms; null-free: undefined when refused. */
+export function readQuantity(descriptor: QuantityDescriptor, node: JsonNode, context: Context): Measured | undefined {
+  const extras = node.type === 'object' ? readExtras(descriptor, node, context) : NO_EXTRAS;
+  if (extras === undefined) return undefined;
+  const read = readMeasured(plain(node, READ_TOGETHER), descriptor.kind);
+  if (!read.ok) return refuseAll(read.problems, node, context);
+  const { value } = read;
+  if (!inRange(value.value, descriptor, node, context)) return undefined;
+  return { ...value, parts: withRemarks(value.parts, descriptor, node), tide: null, ...extras };
+}
+
+/** A number with a unit and without uncertainty. */
+export function readScalar(descriptor: ScalarDescriptor, node: JsonNode, context: Context): number | undefined {
+  let value: number;
+  if (node.type === 'object') {
+    const own = ownMembers(node, context.key, scalarKeys(descriptor), {}, context);
+    const whole = own.size === node.members.size && readRemarkKeys(own, context);
+    const read = readMeasured(plain(node, READ_TOGETHER), descriptor.kind);
+    if (!read.ok) return refuseAll(read.problems, node, context);
+    if (read.value.u > 0) return refuse(context, node, 'uncertainty-not-expected', 'a number without an uncertainty');
+    if (!whole) return undefined;
+    ({ value } = read.value);
+  } else {
+    const read = readExact(plain(node), descriptor.kind);
+    if (!read.ok) return refuseAll(read.problems, node, context);
+    ({ value } = read);
+  }
+  return inRange(value, descriptor, node, context) ? value : undefined;
+}
+
+/** Pieces of one standard uncertainty. */
+export function readPieces<P extends ObjectDescriptor<Keys>>(
+  { single, piece }: PiecesDescriptor<P>,
+  node: JsonNode,
+  context: Context,
+): readonly PieceOf<P>[] | undefined {
+  type Piece = PieceOf<P>;
+  const whole = (read: ReadOf<P>): Piece => ({ source: null, ...read }) as unknown as Piece;
+  if (node.type === 'object') {
+    const read = context.read(piece, node, context) as ReadOf<P> | undefined;
+    return read === undefined ? undefined : [whole(read)].filter((p) => p.u > 0);
+  }
+  if (node.type !== 'array') {
+    const u = readScalar(single, node, context);
+    return u === undefined ? undefined : u === 0 ? [] : [{ u, source: null } as unknown as Piece];
+  }
+  const pieces: Piece[] = [];
+  const firstWith = new Map<string, number>();
+  let good = true;
+  for (const [i, item] of node.items.entries()) {
+    const at = inside(context, i);
+    const read = context.read(piece, item, at) as ReadOf<P> | undefined;
+    if (read === undefined) {
+      good = false;
+      continue;
+    }
+    const p = whole(read);
+    const first = p.source === null ? undefined : firstWith.get(p.source);
+    if (p.source !== null && first !== undefined) {
+      const source = item.type === 'object' ? item.members.get('source')?.value : undefined;
+      refuse(
+        inside(at, 'source'),
+        source ?? item,
+        'source-twice',
+        `each source once: piece ${first} names it too, and pieces are independent of each other`,
+      );
+      good = false;
+    }
+    if (p.source !== null) firstWith.set(p.source, i);
+    if (p.u > 0) pieces.push(p);
+  }
+  return good ? pieces : undefined;
+}
+
+type Extras = Partial<Pick<Measured, 'tide' | 'frame' | 'epochYear' | 'rateMPerS' | 'note' | 'reference' | 'date'>>;
+
+const NO_EXTRAS: Extras = {};
+
+/** The keys that lib/quantity leaves alone, and the sources named. */
+function readExtras(descriptor: QuantityDescriptor, node: JsonObject, context: Context): Extras | undefined {
+  const keys = quantityKeys(descriptor);
+  const refused = descriptor.tide ? {} : NO_TIDE;
+  const own = ownMembers(node, context.key, keys, refused, context);
+  // a grid stands in place of the value: that the value is missing would be a false complaint
+  if (node.members.has('grid') && unbuilt.has(`${context.key}.grid`)) return undefined;
+  let good = own.size === node.members.size && node.duplicates.length === 0;
+  const extras: Record<string, unknown> = {};
+  for (const [key, { value }] of own) {
+    const at = inside(context, key);
+    if (key === 'source') noteSource(value, at);
+    else if (key === 'parts' && value.type === 'array') good = checkParts(value.items, at) && good;
+    else if (!READ_TOGETHER.has(key)) {
+      const read = context.read(keys[key]!.descriptor, value, at);
+      if (read === undefined) good = false;
+      else extras[NAMES[key] ?? key] = read;
+    }
+  }
+  // faults of the numbers stand beside those of the keys, so that both are seen at once
+  if (!good) {
+    const read = readMeasured(plain(node, READ_TOGETHER), descriptor.kind);
+    if (!read.ok) refuseAll(read.problems, node, context);
+    return undefined;
+  }
+  return extras as Extras;
+}
+
+const NAMES: Readonly<Record<string, string>> = { epoch: 'epochYear', rate: 'rateMPerS' };
+
+const NO_TIDE = {
+  tide: { code: 'tide-not-here', expected: 'no tide label: the permanent tide does not enter this value' },
+};
+
+const PART_FORM: Keys = { u: remarks.note, source: remarks.note, ...remarks };
+
+function checkParts(items: readonly JsonNode[], context: Context): boolean {
+  let good = true;
+  for (const [i, item] of items.entries()) {
+    if (item.type !== 'object') continue;
+    const at = inside(context, i);
+    const own = ownMembers(item, 'part', PART_FORM, {}, at);
+    if (own.size !== item.members.size || item.duplicates.length > 0) good = false;
+    const source = own.get('source');
+    if (source) noteSource(source.value, inside(at, 'source'));
+    if (!readRemarkKeys(own, at)) good = false;
+  }
+  return good;
+}
+
+function noteSource(node: JsonNode, context: Context): void {
+  // anything but a text is refused by lib/quantity
+  if (node.type !== 'string' || node.value === '') return;
+  const { reading, path, owner, atSite } = context;
+  reading.uses.push({ list: 'sources', builtIn: [], id: node.value, path, node, owner, atSite });
+}
+
+const REMARKS = Object.keys(remarks) as (keyof typeof remarks)[];
+
+function readRemarkKeys(members: JsonObject['members'], context: Context): boolean {
+  let good = true;
+  for (const key of REMARKS) {
+    const member = members.get(key);
+    if (member && context.read(remarks[key].descriptor, member.value, inside(context, key)) === undefined) good = false;
+  }
+  return good;
+}
+
+/** Puts the remarks of the pieces back on them; pieces with u = 0 were left out. */
+function withRemarks(
+  parts: readonly UncertaintyPart[],
+  { kind }: QuantityDescriptor,
+  node: JsonNode,
+): readonly UncertaintyPart[] {
+  const list = node.type === 'object' ? node.members.get('parts')?.value : undefined;
+  if (list?.type !== 'array') return parts;
+  const stated = list.items.filter((item) => {
+    const u = item.type === 'object' ? item.members.get('u') : undefined;
+    const read = u && readStandardUncertainty(plain(u.value), kind);
+    return read?.ok && read.value > 0;
+  });
+  return parts.map((part, i) => {
+    const item = stated[i];
+    if (item?.type !== 'object' || !REMARKS.some((key) => item.members.has(key))) return part;
+    const texts = REMARKS.flatMap((key) => {
+      const member = item.members.get(key);
+      return member?.value.type === 'string' ? [[key, member.value.value]] : [];
+    });
+    return { ...part, ...Object.fromEntries(texts) };
+  });
+}
+
+function inRange(value: number, range: Range, node: JsonNode, context: Context): boolean {
+  if (isInRange(value, range)) return true;
+  const at = node.type === 'object' ? (node.members.get('value')?.value ?? node) : node;
+  refuse(node.type === 'object' ? inside(context, 'value') : context, at, 'out-of-range', rangeInWords(range) ?? '');
+  return false;
+}
+
+function refuseAll(problems: readonly QuantityProblem[], node: JsonNode, context: Context): undefined {
+  for (const problem of problems) {
+    let at = node;
+    for (const step of problem.at === '' ? [] : problem.at.split('.')) {
+      const next: JsonNode | undefined =
+        at.type === 'object' ? at.members.get(step)?.value : at.type === 'array' ? at.items[Number(step)] : undefined;
+      if (next === undefined) break;
+      at = next;
+    }
+    const { reading } = context;
+    const path = problem.at === '' ? context.path : `${context.path}.${problem.at}`;
+    const start = problem.position === null ? at.start : reading.placeInside(at, problem.position);
+    const found = problem.code === 'missing' ? 'nothing' : reading.show(at);
+    reading.add(problem.code === 'missing' ? 'missing-key' : problem.code, path, at, found, problem.expected, start);
+  }
+  return undefined;
+}
+
+/** The value behind a node as lib/quantity takes it; of the outer object only the keys in `only`. */
+function plain(node: JsonNode, only?: ReadonlySet<string>): unknown {
+  switch (node.type) {
+    case 'string':
+    case 'number':
+    case 'boolean':
+      return node.value;
+    case 'null':
+      return null;
+    case 'foreign':
+      return Symbol(node.what);
+    case 'array':
+      return node.items.map((item) => plain(item));
+    case 'object': {
+      // no prototype: a key such as __proto__ is a key like any other
+      const object: Record<string, unknown> = Object.create(null);
+      for (const [key, { value }] of node.members) if (!only || only.has(key)) object[key] = plain(value);
+      return object;
+    }
+  }
+}

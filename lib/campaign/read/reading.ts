@@ -1,0 +1,133 @@
+import type { Fault } from '../fault.js';
+import { placeInString, quoted } from '../json-text.js';
+import type { JsonNode } from '../json-tree.js';
+import type { ListName } from '../schema/descriptor.js';
+import { TextPlaces } from '../text-place.js';
+
+/** More faults than this are of no use to anybody; the last one says that there are more. */
+const MAX_FAULTS = 1000;
+
+/** Ends a reading that has MAX_FAULTS. */
+export class TooManyFaults extends Error {}
+
+/** An item that has an id. */
+export interface Definition {
+  readonly id: string;
+  readonly path: string;
+  readonly node: JsonNode;
+}
+
+/** A place that names an item. */
+export interface Use {
+  readonly list: ListName;
+  readonly id: string;
+  readonly path: string;
+  readonly node: JsonNode;
+  readonly builtIn: readonly string[];
+  /** the item in which the name stands */
+  readonly owner: { readonly list: ListName; readonly id: string } | null;
+  /** whether the value lies at a site */
+  readonly atSite: boolean;
+}
+
+/** Where an object that was read came from. */
+export interface Origin {
+  readonly path: string;
+  readonly node: JsonNode;
+}
+
+interface PlacedFault {
+  readonly fault: Fault;
+  readonly start: number;
+}
+
+/** What one reading collects on its way through the tree: faults, definitions of ids, and names of other items. */
+export class Reading {
+  readonly definitions = new Map<ListName, Map<string, Definition>>();
+  readonly uses: Use[] = [];
+  private readonly origins = new WeakMap<object, Origin>();
+  private readonly placed: PlacedFault[] = [];
+  private places: TextPlaces | null = null;
+
+  /** @param text the file, or null when the value came from memory */
+  constructor(private readonly text: string | null) {}
+
+  get hasFaults(): boolean {
+    return this.placed.length > 0;
+  }
+
+  /** A fault at a node, or at the key of a member if `start` says so. */
+  add(code: string, path: string, node: JsonNode, found: string, expected: string, start = node.start): void {
+    if (this.placed.length === MAX_FAULTS - 1) {
+      code = 'too-many-faults';
+      found = `${MAX_FAULTS} faults and perhaps more`;
+      expected = 'these mended first';
+    }
+    const place = this.text === null || start < 0 ? null : this.placesOf(this.text).at(start);
+    const fault = { code, path, line: place?.line ?? null, column: place?.column ?? null, found, expected };
+    this.placed.push({ fault, start });
+    if (this.placed.length >= MAX_FAULTS) throw new TooManyFaults();
+  }
+
+  /** Index in the file of a character inside a text value. */
+  placeInside(node: JsonNode, position: number): number {
+    return this.text === null || node.start < 0 || node.type !== 'string'
+      ? node.start
+      : placeInString(this.text, node.start, position);
+  }
+
+  /** The faults, by their place in the file; those without a text in the order in which they were found. */
+  faults(): Fault[] {
+    return this.placed.sort((a, b) => a.start - b.start).map(({ fault }) => fault);
+  }
+
+  /** What stands at a node, for a message. */
+  show(node: JsonNode): string {
+    switch (node.type) {
+      case 'string':
+        return quoted(node.value);
+      case 'number':
+        if (Number.isFinite(node.value) || this.text === null || node.start < 0) return String(node.value);
+        return /^[-+.\de]{1,40}/i.exec(this.text.slice(node.start, node.start + 40))?.[0] ?? String(node.value);
+      case 'boolean':
+        return String(node.value);
+      case 'null':
+        return 'null';
+      case 'foreign':
+        return `a ${node.what}`;
+      case 'array':
+        return node.items.length === 0 ? 'an empty list' : `a list of ${node.items.length}`;
+      case 'object': {
+        const keys = [...node.members.keys()].slice(0, 4).map((key) => quoted(key, 20));
+        if (keys.length === 0) return 'an empty object';
+        return `an object with ${keys.join(', ')}${node.members.size > keys.length ? ', …' : ''}`;
+      }
+    }
+  }
+
+  define(list: ListName, definition: Definition): void {
+    const items = this.definitions.get(list) ?? new Map<string, Definition>();
+    this.definitions.set(list, items);
+    if (!items.has(definition.id)) items.set(definition.id, definition);
+  }
+
+  defined(list: ListName, id: string): Definition | undefined {
+    return this.definitions.get(list)?.get(id);
+  }
+
+  /** Remembers where an object came from, for checks that look at the finished value. */
+  remember(value: object, origin: Origin): void {
+    this.origins.set(value, origin);
+  }
+
+  originOf(value: object): Origin {
+    const origin = this.origins.get(value);
+    if (!origin) throw new Error('an object that this reading has not made');
+    return origin;
+  }
+
+  private placesOf(text: string): TextPlaces {
+    this.places ??= new TextPlaces(text);
+    return this.places;
+  }
+}

@@ -1,0 +1,86 @@
+import { MEASURED_KEYS } from '../../quantity/index.js';
+import {
+  type Keys,
+  list,
+  number,
+  object,
+  oneOf,
+  optional,
+  type QuantityDescriptor,
+  reference,
+  remarks,
+  required,
+  type ScalarDescriptor,
+  scalar,
+  text,
+} from './descriptor.js';
+
+const source = optional(
+  reference('sources'),
+  'Source',
+  'Shared error source: the same source elsewhere is the same error. Without it the error is independent of all others.',
+);
+
+const tideKey = optional(
+  oneOf('mean', 'zero', 'free'),
+  'Tide system',
+  'Permanent-tide system of the value. Without it a default is taken, with a warning.',
+);
+
+const frameKeys = {
+  frame: optional(text(), 'Frame', 'Terrestrial reference frame of the height.'),
+  epoch: optional(number({ min: 1900, max: 2200 }), 'Epoch', 'Epoch of the height, decimal years.'),
+  rate: optional(scalar('speed'), 'Rate', 'Vertical rate, m/s; positive upwards.'),
+} as const;
+
+/** Keys of the object form of a measured number; `value`, `u` and `unit` are read together, by lib/quantity. */
+export function quantityKeys(descriptor: QuantityDescriptor): Keys {
+  const known = made.get(descriptor);
+  if (known) return known;
+  const keys = makeQuantityKeys(descriptor);
+  made.set(descriptor, keys);
+  return keys;
+}
+
+const made = new WeakMap<QuantityDescriptor, Keys>();
+
+function makeQuantityKeys(descriptor: QuantityDescriptor): Keys {
+  const { kind } = descriptor;
+  const uncertainty = scalar(kind, { min: 0 });
+  return {
+    value: required(scalar(kind), 'Value', 'A number in the field’s default unit, or a text such as "143.216(8) m".'),
+    u: optional(uncertainty, 'u', 'Standard uncertainty, where the value’s text does not carry it.'),
+    unit: optional(text(), 'Unit', 'Unit of value and u where they have none of their own.'),
+    source,
+    parts: optional(
+      list(
+        object('part', 'One piece of a standard uncertainty.', {
+          u: required(uncertainty, 'u', 'Standard uncertainty of the piece.'),
+          source,
+        }),
+        { min: 1 },
+      ),
+      'Parts',
+      'Pieces of the uncertainty, in place of source; they add as squares.',
+    ),
+    distribution: optional(
+      oneOf('normal', 'uniform', 'triangular', 't'),
+      'Distribution',
+      'uniform: half-width √3·u; triangular: half-width √6·u; t: needs dof, u is its scale. Default: normal.',
+    ),
+    dof: optional(number({ above: 0 }), 'Degrees of freedom', 'Degrees of freedom of u. Default: infinitely many.'),
+    ...(descriptor.tide ? { tide: tideKey } : {}),
+    ...(descriptor.frame ? frameKeys : {}),
+    ...remarks,
+  };
+}
+
+/** Keys of the object form of a number without uncertainty. */
+export const scalarKeys = ({ kind }: ScalarDescriptor): Keys => ({
+  value: required(scalar(kind), 'Value', 'A number in the field’s default unit, or a text with its unit.'),
+  unit: optional(text(), 'Unit', 'Unit of the value where it has none of its own.'),
+  ...remarks,
+});
+
+/** Keys that lib/quantity reads together; the rest are read here one by one. */
+export const READ_TOGETHER: ReadonlySet<string> = new Set(MEASURED_KEYS);

@@ -1,0 +1,213 @@
+import { LOVE_NUMBERS } from '../earth/permanent-tide.js';
+import { degToRad } from '../quantity/index.js';
+import type {
+  Campaign,
+  Clock,
+  Datum,
+  Determination,
+  Link,
+  Measurement,
+  MeasurementCorrelation,
+  Remarks,
+  Site,
+  Source,
+  Stability,
+  TimeInterval,
+  Transition,
+} from './campaign.js';
+import type {
+  campaignSchema,
+  correlation,
+  datum,
+  measurement,
+  site,
+  source,
+  transition,
+} from './schema/campaign-schema.js';
+import type { ReadOf } from './schema/descriptor.js';
+import type { determination } from './schema/determinations.js';
+import type { clock, interval, link } from './schema/instruments.js';
+import { coveredShare, inOrder } from './time-intervals.js';
+
+/** These keys of an object, where they stand. */
+function keep<T, K extends keyof T>(from: T, ...keys: K[]): Pick<T, K> {
+  const kept: Partial<T> = {};
+  for (const key of keys) if (from[key] !== undefined) kept[key] = from[key];
+  return kept as Pick<T, K>;
+}
+
+const remarksOf = (from: Remarks): Remarks => keep(from, 'note', 'reference', 'date');
+
+const toInterval = (i: ReadOf<typeof interval>): TimeInterval => ({ ...remarksOf(i), startMs: i.start, endMs: i.end });
+
+const toSource = (s: ReadOf<typeof source>): Source => ({
+  ...remarksOf(s),
+  ...keep(s, 'id', 'name', 'correlation'),
+  ...(s.correlationLength === undefined ? {} : { correlationLengthM: s.correlationLength }),
+});
+
+const toDatum = (d: ReadOf<typeof datum>): Datum => ({
+  ...remarksOf(d),
+  ...keep(d, 'id', 'name', 'W0', 'frame'),
+  origin: d.origin
+    ? {
+        ...remarksOf(d.origin),
+        latitudeRad: degToRad(d.origin.lat),
+        longitudeRad: d.origin.lon === undefined ? null : degToRad(d.origin.lon),
+      }
+    : null,
+  estimateOffset: d.estimateOffset ?? false,
+  estimateTilt: d.estimateTilt ?? false,
+  ...(d.epoch === undefined ? {} : { epochYear: d.epoch }),
+});
+
+const toTransition = (t: ReadOf<typeof transition>): Transition => ({
+  ...remarksOf(t),
+  id: t.id,
+  offset: t.offset ?? null,
+  frequency: t.frequency ?? null,
+});
+
+function toDetermination(d: ReadOf<typeof determination>): Determination {
+  const common = {
+    ...remarksOf(d),
+    check: d.use === 'check',
+    candidate: d.candidate ?? false,
+    cost: d.cost ?? null,
+  };
+  const datumOf = ({ datum }: { readonly datum?: string }): string => datum ?? 'ihrs';
+  switch (d.kind) {
+    case 'potential':
+      return { ...common, kind: d.kind, W: d.W };
+    case 'geopotential-number':
+      return { ...common, kind: d.kind, C: d.C, datum: datumOf(d) };
+    case 'normal-height':
+      return { ...common, kind: d.kind, H: d.H, datum: datumOf(d), ...keep(d, 'field') };
+    case 'normal-orthometric-height':
+      return { ...common, kind: d.kind, H: d.H, datum: datumOf(d) };
+    case 'orthometric-height':
+      return { ...common, kind: d.kind, H: d.H, g: d.g ?? null, datum: datumOf(d) };
+    case 'dynamic-height':
+      return { ...common, kind: d.kind, H: d.H, gammaRef: d.gammaRef ?? null, datum: datumOf(d) };
+    case 'gnss-quasigeoid':
+      return { ...common, kind: d.kind, h: d.h ?? null, zeta: d.zeta, datum: datumOf(d) };
+    case 'gnss-geoid':
+      return {
+        ...common,
+        kind: d.kind,
+        h: d.h ?? null,
+        N: d.N,
+        g: d.g ?? null,
+        meanGravityFactor: d.meanGravityFactor ?? null,
+        datum: datumOf(d),
+      };
+    case 'levelled-from':
+      return {
+        ...common,
+        kind: d.kind,
+        site: d.site,
+        dH: d.dH,
+        g: d.g ?? null,
+        ...(d.length === undefined ? {} : { lengthM: d.length }),
+        ...keep(d, 'b', 'k'),
+      };
+  }
+}
+
+const toSite = (s: ReadOf<typeof site>): Site => ({
+  ...remarksOf(s),
+  ...keep(s, 'id', 'name'),
+  latitudeRad: degToRad(s.lat),
+  longitudeRad: degToRad(s.lon),
+  h: s.h ?? null,
+  g: s.g ?? null,
+  gradient: s.gradient ?? null,
+  variable: s.variable ?? null,
+  determinations: (s.determinations ?? []).map(toDetermination),
+  candidate: s.candidate ?? false,
+  cost: s.cost ?? null,
+});
+
+type StabilityInFile = Partial<Stability> & Remarks;
+
+const toStability = (s: StabilityInFile = {}): Stability => ({
+  ...remarksOf(s),
+  white: s.white ?? 0,
+  flicker: s.flicker ?? 0,
+  phase: s.phase ?? 0,
+});
+
+type InstrumentInFile = ReadOf<typeof clock> | ReadOf<typeof link>;
+
+function toInstrument(i: InstrumentInFile, window: TimeInterval | null) {
+  const available = i.available ? inOrder(i.available.map(toInterval)) : null;
+  return {
+    ...remarksOf(i),
+    ...keep(i, 'id', 'name'),
+    systematic: (i.systematic ?? []).map((p) => ({
+      ...remarksOf(p),
+      ...keep(p, 'name', 'u'),
+      source: p.source ?? null,
+      dof: p.dof ?? null,
+    })),
+    stability: toStability(i.stability),
+    uptime: available === null ? (i.uptime ?? 1) : coveredShare(available, window),
+    available,
+    candidate: i.candidate ?? false,
+    cost: i.cost ?? null,
+  };
+}
+
+const toClock = (c: ReadOf<typeof clock>, window: TimeInterval | null): Clock => ({
+  ...toInstrument(c, window),
+  ...keep(c, 'site', 'transition'),
+  tie: (c.tie ?? []).map((step) => ({ ...remarksOf(step), ...keep(step, 'name', 'dH') })),
+});
+
+const toLink = (l: ReadOf<typeof link>, window: TimeInterval | null): Link => ({
+  ...toInstrument(l, window),
+  ...keep(l, 'from', 'to'),
+  kind: l.kind ?? null,
+  lengthM: l.length ?? null,
+  segments: l.segments ?? 1,
+});
+
+const toMeasurement = (m: ReadOf<typeof measurement>): Measurement => ({
+  ...remarksOf(m),
+  id: m.id ?? null,
+  link: m.link,
+  y: m.tide === undefined ? m.y : { ...m.y, tide: m.tide },
+  includesSystematic: m.includesSystematic ?? false,
+  check: m.use === 'check',
+  startMs: m.start ?? null,
+  endMs: m.end ?? null,
+});
+
+const toCorrelation = (c: ReadOf<typeof correlation>): MeasurementCorrelation => ({
+  ...remarksOf(c),
+  between: [c.between[0] as string, c.between[1] as string],
+  rho: c.rho,
+});
+
+/** A file that was read without fault, as the campaign that everything else works on: defaults put in, radians, names as
+ *  the types have them. */
+export function toCampaign(file: ReadOf<typeof campaignSchema>): Campaign {
+  const window = file.window ? toInterval(file.window) : null;
+  return {
+    ...remarksOf(file),
+    ...keep(file, 'format', 'title'),
+    tide: file.tide ?? 'mean',
+    window,
+    targetM: file.target ?? null,
+    effectM: file.effect ?? null,
+    love: { ...remarksOf(file.love ?? {}), h2: file.love?.h2 ?? LOVE_NUMBERS.h2, k2: file.love?.k2 ?? LOVE_NUMBERS.k2 },
+    sources: (file.sources ?? []).map(toSource),
+    datums: (file.datums ?? []).map(toDatum),
+    transitions: (file.transitions ?? []).map(toTransition),
+    sites: file.sites.map(toSite),
+    clocks: (file.clocks ?? []).map((c) => toClock(c, window)),
+    links: (file.links ?? []).map((l) => toLink(l, window)),
+    measurements: (file.measurements ?? []).map(toMeasurement),
+    correlations: (file.correlations ?? []).map(toCorrelation),
+  };
+}
