@@ -1,3 +1,8 @@
-import { version } from '../constants/version.js';
+import { main } from './main.js';
 
-process.stdout.write(`${version}\n`);
+// `plumbtick predict file | head` closes the pipe early: that is no fault; a full disk is
+for (const stream of [process.stdout, process.stderr])
+  stream.on('error', (error: NodeJS.ErrnoException) => process.exit(error.code === 'EPIPE' ? 0 : 1));
+
+// no process.exit: it would cut a long output to a pipe
+process.exitCode = await main(process.argv.slice(2));

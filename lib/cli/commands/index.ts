@@ -1,0 +1,8 @@
+import type { Command } from '../command.js';
+import { check } from './check.js';
+import { floors } from './floors.js';
+import { newCampaign } from './new.js';
+import { predict } from './predict.js';
+
+/** Every command, in the order of the help. */
+export const commands: readonly Command[] = [floors, newCampaign, check, predict];

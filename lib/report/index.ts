@@ -1,0 +1,29 @@
+export { reportAsCsv, tableAsCsv } from './as-csv.js';
+export { reportAsMarkdown, tableAsMarkdown } from './as-markdown.js';
+export { reportAsText, tableAsText } from './as-text.js';
+export { floorsReport } from './floors-report.js';
+export {
+  decimalCell,
+  estimateCell,
+  HERTZ,
+  METRES,
+  OFFSET,
+  POTENTIAL,
+  type Scale,
+  sizeCell,
+  statedCell,
+} from './numbers.js';
+export { type PredictionReportOptions, predictionReport } from './prediction-report.js';
+export {
+  type Cell,
+  type Column,
+  estimateColumn,
+  headText,
+  none,
+  notComputed,
+  numberColumn,
+  type Report,
+  type Table,
+  textCell,
+  textColumn,
+} from './table.js';
