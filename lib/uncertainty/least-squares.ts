@@ -165,36 +165,36 @@ function wellConditioned(normal: Matrix, factor: Matrix): boolean {
   return factor.every((row, i) => row[i]! * row[i]! > 1e-12 * normal[i]![i]!);
 }
 
-/** Unknowns with a part in the null space of the normal matrix, found by eliminating it with diagonal pivots. */
+/** Unknowns with a part in the null space of the normal matrix, found by Gauss–Jordan elimination with diagonal pivots. */
 function openUnknowns(normal: Matrix, nullspace: Matrix): number[] {
   const n = normal.length;
   const a = normal.map((row) => Float64Array.from(row));
   const scale = a.map((row, i) => row[i]! || 1);
-  const done = new Array<boolean>(n).fill(false);
-  for (let step = 0; step < n; step++) {
+  const pivots: number[] = [];
+  for (;;) {
     let pivot = -1;
-    for (let i = 0; i < n; i++)
-      if (
-        !done[i] &&
-        a[i]![i]! > 1e-10 * scale[i]! &&
-        (pivot < 0 || a[i]![i]! / scale[i]! > a[pivot]![pivot]! / scale[pivot]!)
-      )
-        pivot = i;
-    if (pivot < 0) break;
-    done[pivot] = true;
     for (let i = 0; i < n; i++) {
-      if (done[i]) continue;
-      const f = a[i]![pivot]! / a[pivot]![pivot]!;
-      if (f !== 0) for (let j = 0; j < n; j++) a[i]![j]! -= f * a[pivot]![j]!;
+      if (pivots.includes(i) || a[i]![i]! <= 1e-10 * scale[i]!) continue;
+      if (pivot < 0 || a[i]![i]! / scale[i]! > a[pivot]![pivot]! / scale[pivot]!) pivot = i;
+    }
+    if (pivot < 0) break;
+    pivots.push(pivot);
+    const d = a[pivot]![pivot]!;
+    for (let j = 0; j < n; j++) a[pivot]![j]! /= d;
+    for (let i = 0; i < n; i++) {
+      const f = a[i]![pivot]!;
+      if (i !== pivot && f !== 0) for (let j = 0; j < n; j++) a[i]![j]! -= f * a[pivot]![j]!;
     }
   }
   const open = new Set<number>();
-  done.forEach((isDone, column) => {
-    if (!isDone)
-      nullspace.forEach((row, unknown) => {
-        if (Math.abs(row[column]!) > 1e-9) open.add(unknown);
-      });
-  });
+  for (let column = 0; column < n; column++) {
+    if (pivots.includes(column)) continue;
+    // the null vector of this column: 1 there, −a at each pivot
+    const parts = [column, ...pivots.filter((p) => Math.abs(a[p]![column]!) > 1e-6)];
+    nullspace.forEach((row, unknown) => {
+      if (parts.some((c) => Math.abs(row[c]!) > 1e-9)) open.add(unknown);
+    });
+  }
   return [...open].sort((x, y) => x - y);
 }
 
