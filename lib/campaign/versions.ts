@@ -1,7 +1,6 @@
 import { quoted } from './json-text.js';
 import type { JsonNode } from './json-tree.js';
 import type { Context } from './read/context.js';
-import { refuse } from './read/context.js';
 import { CAMPAIGN_FORMAT } from './schema/campaign-schema.js';
 
 /** The version of the format that this program reads and writes. When the format moves on, the step from each old version to
@@ -14,15 +13,15 @@ export const CAMPAIGN_VERSION = 1;
 export function formatIsReadable(root: JsonNode, context: Context): boolean {
   const format = root.type === 'object' ? root.members.get('format')?.value : undefined;
   if (format?.type !== 'string') return true;
-  const at = { ...context, path: 'format' };
+  const at = context.member('format');
   const version = /^plumbtick-campaign\/(\d{1,9})$/.exec(format.value)?.[1];
   if (version !== undefined && Number(version) > CAMPAIGN_VERSION) {
-    refuse(at, format, 'newer-format', `${quoted(CAMPAIGN_FORMAT)}: the file needs a newer version of Plumbtick`);
+    at.refuse(format, 'newer-format', `${quoted(CAMPAIGN_FORMAT)}: the file needs a newer version of Plumbtick`);
     return false;
   }
   const other = /^plumbtick-([a-z]+)\/\d+$/.exec(format.value)?.[1];
   if (other !== undefined && other !== 'campaign') {
-    refuse(at, format, 'wrong-format', `${quoted(CAMPAIGN_FORMAT)}: this is a ${other}, not a campaign`);
+    at.refuse(format, 'wrong-format', `${quoted(CAMPAIGN_FORMAT)}: this is a ${other}, not a campaign`);
     return false;
   }
   return true;

@@ -13,7 +13,7 @@ type Readable<T> = Partial<T>;
 /** Checks across keys and items, on whatever could be read. */
 export function checkCampaign(file: Readable<ReadOf<typeof campaignSchema>>, reading: Reading): void {
   checkReferences(reading);
-  checkSources(file.sources ?? [], reading.uses, reading);
+  checkSources(file.sources ?? [], reading.uses);
   for (const s of file.sites ?? []) checkHeights(s, reading);
   for (const t of file.transitions ?? []) checkTransition(t, reading);
   for (const m of file.measurements ?? []) checkMeasurement(m, reading);
@@ -28,9 +28,15 @@ function checkHeights(s: Readable<ReadOf<typeof site>>, reading: Reading): void 
   if (member(reading.originOf(s), 'h') !== reading.originOf(s).node) return;
   for (const d of s.determinations ?? []) {
     if (d.kind !== 'gnss-quasigeoid' && d.kind !== 'gnss-geoid') continue;
-    const { path, node } = reading.originOf(d);
-    if (member({ path, node }, 'h') === node)
-      reading.add('missing-key', `${path}.h`, node, 'nothing', '"h": the ellipsoidal height, here or at the site');
+    const { context, node } = reading.originOf(d);
+    if (member({ context, node }, 'h') === node)
+      reading.add(
+        'missing-key',
+        `${context.path}.h`,
+        node,
+        'nothing',
+        '"h": the ellipsoidal height, here or at the site',
+      );
   }
 }
 
@@ -46,7 +52,7 @@ function checkTransition(t: Readable<ReadOf<typeof transition>>, reading: Readin
     );
     reading.add(
       'missing-key',
-      `${origin.path}.frequency`,
+      `${origin.context.path}.frequency`,
       origin.node,
       'nothing',
       `"frequency" in Hz, for ${quoted(t.id)} has no recommended one${near === null ? '' : `; did you mean ${quoted(near)}?`}`,
@@ -54,7 +60,7 @@ function checkTransition(t: Readable<ReadOf<typeof transition>>, reading: Readin
   } else if (stated !== origin.node)
     reading.add(
       'frequency-is-recommended',
-      `${origin.path}.frequency`,
+      `${origin.context.path}.frequency`,
       stated,
       reading.show(stated),
       `no frequency: the recommended one of ${quoted(t.id)} is built in; a measured departure from it is "offset"`,
@@ -66,7 +72,7 @@ function checkMeasurement(m: Readable<ReadOf<typeof measurement>>, reading: Read
   if (m.tide !== undefined && m.y !== undefined && m.y.tide !== null)
     reading.add(
       'exclusive-keys',
-      `${origin.path}.tide`,
+      `${origin.context.path}.tide`,
       member(origin, 'tide'),
       '"tide" beside y and in it',
       'one of them',
@@ -75,7 +81,7 @@ function checkMeasurement(m: Readable<ReadOf<typeof measurement>>, reading: Read
     const y = member(origin, 'y');
     reading.add(
       'uncertainty-missing',
-      `${origin.path}.y`,
+      `${origin.context.path}.y`,
       y,
       reading.show(y),
       'a y with its uncertainty, which "includesSystematic" says is the whole one',
@@ -90,7 +96,7 @@ function checkCorrelations(correlations: readonly Readable<ReadOf<typeof correla
     if (a === undefined || b === undefined) continue;
     const origin = reading.originOf(c);
     const node = member(origin, 'between');
-    const path = `${origin.path}.between`;
+    const path = `${origin.context.path}.between`;
     if (a === b) reading.add('self-reference', path, node, `${quoted(a)} twice`, 'two measurements');
     const pair = JSON.stringify([a, b].sort());
     const first = seen.get(pair);
@@ -102,6 +108,6 @@ function checkCorrelations(correlations: readonly Readable<ReadOf<typeof correla
         `${quoted(a)} and ${quoted(b)} again`,
         `each pair once: it stands at ${first}`,
       );
-    else seen.set(pair, origin.path);
+    else seen.set(pair, origin.context.path);
   }
 }

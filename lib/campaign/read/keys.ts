@@ -2,8 +2,8 @@ import { closest } from '../../quantity/index.js';
 import { quoted } from '../json-text.js';
 import type { JsonObject } from '../json-tree.js';
 import type { Keys, ObjectDescriptor } from '../schema/descriptor.js';
-import { unbuilt } from '../schema/unbuilt.js';
-import { type Context, inside } from './context.js';
+import { isBuilt } from '../schema/unbuilt.js';
+import type { Context } from './context.js';
 
 /** Refuses the keys of an object that are not its own, each in the words that fit.
  * @param name what stands before the key in the list of keys that are not built yet
@@ -15,23 +15,16 @@ export function ownMembers(
   refused: ObjectDescriptor<Keys>['refused'],
   context: Context,
 ): JsonObject['members'] {
-  const { reading } = context;
   for (const { key, keyStart } of node.duplicates)
-    reading.add(
-      'duplicate-key',
-      inside(context, pathStep(key)).path,
-      node,
-      `${quoted(key)} a second time`,
-      'each key once',
-      keyStart,
-    );
+    context
+      .member(pathStep(key))
+      .refuse(node, 'duplicate-key', 'each key once', `${quoted(key)} a second time`, keyStart);
   let own = node.members;
   for (const [key, { keyStart }] of node.members) {
-    const path = inside(context, pathStep(key)).path;
     let code: string;
     let expected: string;
     const refusal = Object.hasOwn(refused, key) ? refused[key] : undefined;
-    if (unbuilt.has(`${name}.${key}`)) {
+    if (!isBuilt(name, key)) {
       code = 'not-built';
       expected = `no ${quoted(key)}: it is part of the format, but this version does not compute it yet`;
     } else if (refusal) ({ code, expected } = refusal);
@@ -40,10 +33,10 @@ export function ownMembers(
       code = 'unknown-key';
       expected = suggestion(
         key,
-        Object.keys(keys).filter((k) => !unbuilt.has(`${name}.${k}`)),
+        Object.keys(keys).filter((k) => isBuilt(name, k)),
       );
     }
-    reading.add(code, path, node, quoted(key), expected, keyStart < 0 ? node.start : keyStart);
+    context.member(pathStep(key)).refuse(node, code, expected, quoted(key), keyStart);
     if (own === node.members) own = new Map(node.members);
     (own as Map<string, unknown>).delete(key);
   }

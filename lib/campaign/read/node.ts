@@ -1,6 +1,6 @@
 import type { JsonNode } from '../json-tree.js';
-import type { Descriptor, ReadOf } from '../schema/descriptor.js';
-import type { Context } from './context.js';
+import type { Descriptor } from '../schema/descriptor.js';
+import { Context, type ReadAny } from './context.js';
 import { readList, readObject, readVariant } from './object.js';
 import { readAngle, readInstant } from './place-and-time.js';
 import { readBoolean, readEnum, readId, readNumber, readReference, readText } from './plain-value.js';
@@ -41,12 +41,6 @@ function readAny(descriptor: Descriptor, node: JsonNode, context: Context): unkn
 }
 
 /** The context at the root of a file. */
-export const rootContext = (reading: Reading): Context => ({
-  reading,
-  path: '',
-  key: '',
-  atSite: false,
-  owner: null,
+export const rootContext = (reading: Reading): Context =>
   // each reader returns what its descriptor says; the switch cannot tell the compiler so
-  read: readAny as <D extends Descriptor>(descriptor: D, node: JsonNode, context: Context) => ReadOf<D> | undefined,
-});
+  Context.root(reading, readAny as ReadAny);

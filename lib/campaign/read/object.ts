@@ -4,12 +4,14 @@ import type {
   Descriptor,
   Keys,
   ListDescriptor,
+  ListName,
   ObjectDescriptor,
   ReadOf,
   VariantDescriptor,
 } from '../schema/descriptor.js';
-import { unbuilt } from '../schema/unbuilt.js';
-import { type Context, inside, refuse } from './context.js';
+import { isBuilt, isBuiltKind } from '../schema/unbuilt.js';
+import type { Context } from './context.js';
+import { idFault } from './identifier.js';
 import { ownMembers, suggestion } from './keys.js';
 
 /** The keys of an object. What could be read is returned even where other keys were refused, so that checks across the
@@ -21,24 +23,25 @@ export function readObject<K extends Keys>(
   variantKey?: string,
 ): ReadOf<ObjectDescriptor<K>> | undefined {
   if (node.type !== 'object')
-    return refuse(context, node, 'wrong-type', `a ${descriptor.name}: an object with ${requiredKeys(descriptor)}`);
+    return context.refuse(node, 'wrong-type', `a ${descriptor.name}: an object with ${requiredKeys(descriptor)}`);
   const { keys, name } = descriptor;
   const allowed: Keys = variantKey === undefined ? keys : { [variantKey]: keys['note'] as Keys[string], ...keys };
   const members = ownMembers(node, name, allowed, descriptor.refused, context);
   // a key that is not built yet may stand in for others (a position for lat and lon): their lack is no fault beside it
-  const complete = ![...node.members.keys()].some((key) => unbuilt.has(`${name}.${key}`));
-  const here = descriptor.atSite ? { ...context, atSite: true } : context;
+  const isComplete = () => ![...node.members.keys()].some((key) => !isBuilt(name, key));
+  const here = descriptor.atSite ? context.lyingAtSite() : context;
   const result: Record<string, unknown> = {};
-  for (const [key, { descriptor: inner, required, help }] of Object.entries(keys)) {
+  for (const key in keys) {
+    const { descriptor: inner, required, help } = keys[key] as Keys[string];
     const member = members.get(key);
     if (member !== undefined) {
-      const read = here.read(inner, member.value, inside(here, key));
+      const read = here.read(inner, member.value, here.member(key));
       if (read !== undefined) result[key] = read;
-    } else if (required && complete && !node.members.has(key))
-      refuse(inside(context, key), node, 'missing-key', `${quoted(key)}: ${help}`, 'nothing');
+    } else if (required && !node.members.has(key) && isComplete())
+      context.member(key).refuse(node, 'missing-key', `${quoted(key)}: ${help}`, 'nothing');
   }
   checkPairs(descriptor, node, result, context);
-  context.reading.remember(result, { path: context.path, node });
+  context.reading.remember(result, { node, context });
   return result as ReadOf<ObjectDescriptor<K>>;
 }
 
@@ -55,7 +58,7 @@ function checkPairs(
 ): void {
   const { reading } = context;
   const at = (key: string): JsonNode => node.members.get(key)?.value ?? node;
-  const path = (key: string): string => inside(context, key).path;
+  const path = (key: string): string => context.member(key).path;
   for (const [a, b] of descriptor.exclusive)
     if (node.members.has(a) && node.members.has(b)) {
       const second = (node.members.get(a)?.keyStart ?? 0) > (node.members.get(b)?.keyStart ?? 0) ? a : b;
@@ -87,25 +90,24 @@ export function readVariant<V extends Readonly<Record<string, ObjectDescriptor<K
   node: JsonNode,
   context: Context,
 ): ReadOf<VariantDescriptor<V>> | undefined {
-  const kinds = Object.keys(variants).filter((k) => !unbuilt.has(`${name}=${k}`));
-  if (node.type !== 'object') return refuse(context, node, 'wrong-type', `a ${name}: an object with ${quoted(by)}`);
-  const at = inside(context, by);
+  const kinds = () => Object.keys(variants).filter((k) => isBuiltKind(name, k));
+  if (node.type !== 'object') return context.refuse(node, 'wrong-type', `a ${name}: an object with ${quoted(by)}`);
+  const at = context.member(by);
   const kind = node.members.get(by)?.value;
-  if (kind === undefined) return refuse(at, node, 'missing-key', `${quoted(by)}, ${suggestion('', kinds)}`, 'nothing');
-  if (kind.type !== 'string') return refuse(at, kind, 'wrong-type', suggestion('', kinds));
-  if (unbuilt.has(`${name}=${kind.value}`))
-    return refuse(
-      at,
+  if (kind === undefined) return at.refuse(node, 'missing-key', `${quoted(by)}, ${suggestion('', kinds())}`, 'nothing');
+  if (kind.type !== 'string') return at.refuse(kind, 'wrong-type', suggestion('', kinds()));
+  if (!isBuiltKind(name, kind.value))
+    return at.refuse(
       kind,
       'not-built',
       `another ${by}: this one is part of the format, but this version does not compute it yet`,
     );
   const variant = Object.hasOwn(variants, kind.value) ? variants[kind.value] : undefined;
-  if (variant === undefined) return refuse(at, kind, 'not-one-of', suggestion(kind.value, kinds));
+  if (variant === undefined) return at.refuse(kind, 'not-one-of', suggestion(kind.value, kinds()));
   const read = readObject(variant, node, context, by);
   if (read === undefined) return undefined;
   const whole = { ...read, [by]: kind.value };
-  context.reading.remember(whole, { path: context.path, node });
+  context.reading.remember(whole, { node, context });
   return whole as unknown as ReadOf<VariantDescriptor<V>>;
 }
 
@@ -117,20 +119,18 @@ export function readList<D extends Descriptor>(
 ): readonly ReadOf<D>[] | undefined {
   const { min, max } = length;
   const size = min === max ? `a list of ${min}` : min > 0 ? `a list with at least ${min}` : 'a list: [ … ]';
-  if (node.type !== 'array') return refuse(context, node, 'wrong-type', size);
-  if (node.items.length < min || node.items.length > max) return refuse(context, node, 'wrong-length', size);
+  if (node.type !== 'array') return context.refuse(node, 'wrong-type', size);
+  if (node.items.length < min || node.items.length > max) return context.refuse(node, 'wrong-length', size);
   const items: ReadOf<D>[] = [];
   const ids = new Set<string>();
+  const list: ListName | undefined = item.type === 'object' ? item.keys['id']?.descriptor.list : undefined;
   for (const [i, child] of node.items.entries()) {
     const id = pathBy === 'id' ? idOf(child) : null;
     // of two items with one id the second is named by its position, so that a path means one place
     const step = id === null || ids.has(id) ? i : id;
     if (id !== null) ids.add(id);
-    const owner =
-      id !== null && item.type === 'object' && item.keys['id']
-        ? { list: item.keys['id'].descriptor.list, id }
-        : context.owner;
-    const read = context.read(item, child, { ...inside(context, step), owner, key: context.key });
+    const owner = id !== null && list !== undefined ? { list, id } : context.owner;
+    const read = context.read(item, child, context.item(step, owner));
     if (read !== undefined) items.push(read as ReadOf<D>);
   }
   return items;
@@ -138,5 +138,5 @@ export function readList<D extends Descriptor>(
 
 function idOf(node: JsonNode): string | null {
   const id = node.type === 'object' ? node.members.get('id')?.value : undefined;
-  return id?.type === 'string' && id.value !== '' && id.value.length <= 100 ? id.value : null;
+  return id?.type === 'string' && idFault(id.value) === null ? id.value : null;
 }

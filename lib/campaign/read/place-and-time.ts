@@ -1,12 +1,12 @@
 import { parseAngle, parseInstant, parseMjd, QuantityError } from '../../quantity/index.js';
 import type { JsonNode } from '../json-tree.js';
 import type { AngleDescriptor } from '../schema/descriptor.js';
-import { type Context, refuse } from './context.js';
+import type { Context } from './context.js';
 
 /** Degrees. */
 export function readAngle({ axis }: AngleDescriptor, node: JsonNode, context: Context): number | undefined {
   if (node.type !== 'number' && node.type !== 'string')
-    return refuse(context, node, 'wrong-type', `a ${axis} in degrees, as a number or as text such as 52°17'41.2"`);
+    return context.refuse(node, 'wrong-type', `a ${axis} in degrees, as a number or as text such as 52°17'41.2"`);
   return parsed(() => parseAngle(node.value, axis).degrees, node, context);
 }
 
@@ -18,8 +18,7 @@ export function readInstant(node: JsonNode, context: Context): number | undefine
   }
   if (node.type === 'number' && Number.isFinite(node.value))
     return parsed(() => parseMjd(node.value.toFixed(12).replace(/\.?0+$/, '')), node, context);
-  return refuse(
-    context,
+  return context.refuse(
     node,
     'wrong-type',
     'a moment: "2027-05-03T00:00:00Z", or a Modified Julian Date such as 61528.25',

@@ -13,8 +13,8 @@ import {
   type ScalarDescriptor,
 } from '../schema/descriptor.js';
 import { quantityKeys, READ_TOGETHER, scalarKeys } from '../schema/quantity-form.js';
-import { unbuilt } from '../schema/unbuilt.js';
-import { type Context, inside, refuse } from './context.js';
+import { isBuilt } from '../schema/unbuilt.js';
+import type { Context } from './context.js';
 import { ownMembers } from './keys.js';
 import { isInRange, rangeInWords } from './range.js';
 
@@ -32,12 +32,12 @@ export function readQuantity(descriptor: QuantityDescriptor, node: JsonNode, con
 /** A number with a unit and without uncertainty. */
 export function readScalar(descriptor: ScalarDescriptor, node: JsonNode, context: Context): number | undefined {
   let value: number;
-  if (node.type === 'object') {
+  if (node.type === 'object' && !descriptor.bare) {
     const own = ownMembers(node, context.key, scalarKeys(descriptor), {}, context);
     const whole = own.size === node.members.size && readRemarkKeys(own, context);
     const read = readMeasured(plain(node, READ_TOGETHER), descriptor.kind);
     if (!read.ok) return refuseAll(read.problems, node, context);
-    if (read.value.u > 0) return refuse(context, node, 'uncertainty-not-expected', 'a number without an uncertainty');
+    if (read.value.u > 0) return context.refuse(node, 'uncertainty-not-expected', 'a number without an uncertainty');
     if (!whole) return undefined;
     ({ value } = read.value);
   } else {
@@ -68,7 +68,7 @@ export function readPieces<P extends ObjectDescriptor<Keys>>(
   const firstWith = new Map<string, number>();
   let good = true;
   for (const [i, item] of node.items.entries()) {
-    const at = inside(context, i);
+    const at = context.item(i);
     const read = context.read(piece, item, at) as ReadOf<P> | undefined;
     if (read === undefined) {
       good = false;
@@ -78,8 +78,7 @@ export function readPieces<P extends ObjectDescriptor<Keys>>(
     const first = p.source === null ? undefined : firstWith.get(p.source);
     if (p.source !== null && first !== undefined) {
       const source = item.type === 'object' ? item.members.get('source')?.value : undefined;
-      refuse(
-        inside(at, 'source'),
+      at.member('source').refuse(
         source ?? item,
         'source-twice',
         `each source once: piece ${first} names it too, and pieces are independent of each other`,
@@ -102,11 +101,11 @@ function readExtras(descriptor: QuantityDescriptor, node: JsonObject, context: C
   const refused = descriptor.tide ? {} : NO_TIDE;
   const own = ownMembers(node, context.key, keys, refused, context);
   // a grid stands in place of the value: that the value is missing would be a false complaint
-  if (node.members.has('grid') && unbuilt.has(`${context.key}.grid`)) return undefined;
+  if (node.members.has('grid') && !isBuilt(context.key, 'grid')) return undefined;
   let good = own.size === node.members.size && node.duplicates.length === 0;
   const extras: Record<string, unknown> = {};
   for (const [key, { value }] of own) {
-    const at = inside(context, key);
+    const at = context.member(key);
     if (key === 'source') noteSource(value, at);
     else if (key === 'parts' && value.type === 'array') good = checkParts(value.items, at) && good;
     else if (!READ_TOGETHER.has(key)) {
@@ -136,11 +135,11 @@ function checkParts(items: readonly JsonNode[], context: Context): boolean {
   let good = true;
   for (const [i, item] of items.entries()) {
     if (item.type !== 'object') continue;
-    const at = inside(context, i);
+    const at = context.item(i);
     const own = ownMembers(item, 'part', PART_FORM, {}, at);
     if (own.size !== item.members.size || item.duplicates.length > 0) good = false;
     const source = own.get('source');
-    if (source) noteSource(source.value, inside(at, 'source'));
+    if (source) noteSource(source.value, at.member('source'));
     if (!readRemarkKeys(own, at)) good = false;
   }
   return good;
@@ -149,8 +148,7 @@ function checkParts(items: readonly JsonNode[], context: Context): boolean {
 function noteSource(node: JsonNode, context: Context): void {
   // anything but a text is refused by lib/quantity
   if (node.type !== 'string' || node.value === '') return;
-  const { reading, path, owner, atSite } = context;
-  reading.uses.push({ list: 'sources', builtIn: [], id: node.value, path, node, owner, atSite });
+  context.reading.uses.push({ list: 'sources', builtIn: [], id: node.value, node, context });
 }
 
 const REMARKS = Object.keys(remarks) as (keyof typeof remarks)[];
@@ -159,7 +157,7 @@ function readRemarkKeys(members: JsonObject['members'], context: Context): boole
   let good = true;
   for (const key of REMARKS) {
     const member = members.get(key);
-    if (member && context.read(remarks[key].descriptor, member.value, inside(context, key)) === undefined) good = false;
+    if (member && context.read(remarks[key].descriptor, member.value, context.member(key)) === undefined) good = false;
   }
   return good;
 }
@@ -191,7 +189,9 @@ function withRemarks(
 function inRange(value: number, range: Range, node: JsonNode, context: Context): boolean {
   if (isInRange(value, range)) return true;
   const at = node.type === 'object' ? (node.members.get('value')?.value ?? node) : node;
-  refuse(node.type === 'object' ? inside(context, 'value') : context, at, 'out-of-range', rangeInWords(range) ?? '');
+  const place = node.type === 'object' ? context.member('value') : context;
+  const negative = range.uncertainty && value < 0;
+  place.refuse(at, negative ? 'negative-u' : 'out-of-range', rangeInWords(range) ?? '');
   return false;
 }
 

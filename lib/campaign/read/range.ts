@@ -1,6 +1,9 @@
 import type { Range } from '../schema/descriptor.js';
 
-const shown = (value: number): string => String(value).replace('-', '−');
+const shown = (value: number): string =>
+  value !== 0 && (Math.abs(value) >= 1e5 || Math.abs(value) < 1e-3)
+    ? value.toExponential().replace('e+', 'e')
+    : String(value);
 
 /** A range in words, "9 to 10.5 (…)"; null where nothing limits the value. */
 export function rangeInWords({ min, max, above, because }: Range): string | null {

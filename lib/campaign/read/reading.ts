@@ -3,6 +3,7 @@ import { placeInString, quoted } from '../json-text.js';
 import type { JsonNode } from '../json-tree.js';
 import type { ListName } from '../schema/descriptor.js';
 import { TextPlaces } from '../text-place.js';
+import type { Context } from './context.js';
 
 /** More faults than this are of no use to anybody; the last one says that there are more. */
 const MAX_FAULTS = 1000;
@@ -13,27 +14,22 @@ export class TooManyFaults extends Error {}
 /** An item that has an id. */
 export interface Definition {
   readonly id: string;
-  readonly path: string;
-  readonly node: JsonNode;
+  readonly context: Context;
 }
 
 /** A place that names an item. */
 export interface Use {
   readonly list: ListName;
   readonly id: string;
-  readonly path: string;
-  readonly node: JsonNode;
   readonly builtIn: readonly string[];
-  /** the item in which the name stands */
-  readonly owner: { readonly list: ListName; readonly id: string } | null;
-  /** whether the value lies at a site */
-  readonly atSite: boolean;
+  readonly node: JsonNode;
+  readonly context: Context;
 }
 
 /** Where an object that was read came from. */
 export interface Origin {
-  readonly path: string;
   readonly node: JsonNode;
+  readonly context: Context;
 }
 
 interface PlacedFault {
@@ -45,7 +41,7 @@ interface PlacedFault {
 export class Reading {
   readonly definitions = new Map<ListName, Map<string, Definition>>();
   readonly uses: Use[] = [];
-  private readonly origins = new WeakMap<object, Origin>();
+  private readonly origins = new Map<object, Origin>();
   private readonly placed: PlacedFault[] = [];
   private places: TextPlaces | null = null;
 

@@ -17,7 +17,7 @@ const SINGULAR: Readonly<Record<ListName, string>> = {
 /** Every name of another item has to name one, and not the item in which it stands. */
 export function checkReferences(reading: Reading): void {
   for (const use of reading.uses) {
-    const { list, id, path, node, builtIn, owner } = use;
+    const { list, id, node, builtIn, context } = use;
     const known = reading.definitions.get(list);
     if (!known?.has(id) && !builtIn.includes(id)) {
       const candidates = [...(known?.keys() ?? []), ...builtIn];
@@ -25,32 +25,20 @@ export function checkReferences(reading: Reading): void {
         candidates.length === 0
           ? `a ${SINGULAR[list]}: none stands in ${quoted(list)}`
           : `a ${SINGULAR[list]}: ${suggestion(id, candidates)}`;
-      reading.add('unknown-id', path, node, reading.show(node), expected);
-    } else if (owner?.list === list && owner.id === id)
-      reading.add(
-        'self-reference',
-        path,
-        node,
-        reading.show(node),
-        `another ${SINGULAR[list]} than the one it stands in`,
-      );
+      context.refuse(node, 'unknown-id', expected);
+    } else if (context.owner?.list === list && context.owner.id === id)
+      context.refuse(node, 'self-reference', `another ${SINGULAR[list]} than the one it stands in`);
   }
 }
 
 /** A correlation length needs a distance: sources that have one may be named only by what lies at a site. */
-export function checkSources(
-  sources: readonly Partial<ReadOf<typeof source>>[],
-  uses: readonly Use[],
-  reading: Reading,
-): void {
+export function checkSources(sources: readonly Partial<ReadOf<typeof source>>[], uses: readonly Use[]): void {
   const withLength = new Set(sources.flatMap((s) => (s.correlationLength === undefined ? [] : [s.id])));
-  for (const { list, id, path, node, atSite } of uses)
-    if (list === 'sources' && !atSite && withLength.has(id))
-      reading.add(
-        'correlation-length-off-site',
-        path,
+  for (const { list, id, node, context } of uses)
+    if (list === 'sources' && !context.atSite && withLength.has(id))
+      context.refuse(
         node,
-        reading.show(node),
+        'correlation-length-off-site',
         'a source without correlationLength: this input lies at no site, so it has no distance to others',
       );
 }

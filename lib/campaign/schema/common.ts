@@ -9,7 +9,12 @@ export const POTENTIAL: Range = {
 };
 export const GRADIENT: Range = { min: -1e-4, max: 1e-4, because: 'a gravity gradient, in s⁻²' };
 export const SMALL_FRACTION: Range = { min: -1e-6, max: 1e-6, because: 'a fraction, not a multiple of 1e-18' };
-export const SMALL_DEVIATION: Range = { min: 0, max: 1e-6, because: 'a fraction, not a multiple of 1e-18' };
+export const SMALL_DEVIATION: Range = {
+  min: 0,
+  max: 1e-6,
+  uncertainty: true,
+  because: 'a fraction, not a multiple of 1e-18',
+};
 
 export const name = optional(text(), 'Name', 'What people call it; shown beside the id.');
 

@@ -50,6 +50,8 @@ export interface Range {
   readonly min?: number;
   readonly max?: number;
   readonly above?: number;
+  /** the value is a standard uncertainty: below 0 it is negative rather than out of range */
+  readonly uncertainty?: true;
   /** why the limits are where they are, for the message */
   readonly because?: string;
 }
@@ -64,6 +66,8 @@ export interface NumberDescriptor extends Reads<number>, Range {
 export interface ScalarDescriptor extends Reads<number>, Range {
   readonly type: 'scalar';
   readonly kind: QuantityKind;
+  /** a number or a text, not the object form; for the pieces of a quantity */
+  readonly bare: boolean;
 }
 
 /** A measured number in any of its forms (number, text, object). */
@@ -188,7 +192,12 @@ export const number = (range: Range & { integer?: boolean } = {}): NumberDescrip
   integer: false,
   ...range,
 });
-export const scalar = (kind: QuantityKind, range: Range = {}): ScalarDescriptor => ({ type: 'scalar', kind, ...range });
+export const scalar = (kind: QuantityKind, more: Range & { bare?: boolean } = {}): ScalarDescriptor => ({
+  type: 'scalar',
+  kind,
+  bare: false,
+  ...more,
+});
 export const quantity = (
   kind: QuantityKind,
   more: Range & { tide?: boolean; frame?: boolean; grid?: boolean } = {},

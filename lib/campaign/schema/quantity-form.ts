@@ -46,9 +46,13 @@ const made = new WeakMap<QuantityDescriptor, Keys>();
 
 function makeQuantityKeys(descriptor: QuantityDescriptor): Keys {
   const { kind } = descriptor;
-  const uncertainty = scalar(kind, { min: 0 });
+  const uncertainty = scalar(kind, { min: 0, uncertainty: true, bare: true });
   return {
-    value: required(scalar(kind), 'Value', 'A number in the field’s default unit, or a text such as "143.216(8) m".'),
+    value: required(
+      scalar(kind, { bare: true }),
+      'Value',
+      'A number in the field’s default unit, or a text such as "143.216(8) m".',
+    ),
     u: optional(uncertainty, 'u', 'Standard uncertainty, where the value’s text does not carry it.'),
     unit: optional(text(), 'Unit', 'Unit of value and u where they have none of their own.'),
     source,
@@ -77,7 +81,11 @@ function makeQuantityKeys(descriptor: QuantityDescriptor): Keys {
 
 /** Keys of the object form of a number without uncertainty. */
 export const scalarKeys = ({ kind }: ScalarDescriptor): Keys => ({
-  value: required(scalar(kind), 'Value', 'A number in the field’s default unit, or a text with its unit.'),
+  value: required(
+    scalar(kind, { bare: true }),
+    'Value',
+    'A number in the field’s default unit, or a text with its unit.',
+  ),
   unit: optional(text(), 'Unit', 'Unit of the value where it has none of its own.'),
   ...remarks,
 });
