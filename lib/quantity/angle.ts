@@ -2,7 +2,7 @@ import { D, type Decimal, MAX_TEXT_LENGTH } from './decimal.js';
 import { QuantityError } from './quantity-error.js';
 import { degToRad, type Radians } from './radians.js';
 import { withCorrection } from './repair.js';
-import { isDash, isDigit, isMinus, skipSpaces } from './scan.js';
+import { isDash, isDigit, isMinus, refuseNotFinite, skipSpaces } from './scan.js';
 
 export type AngleAxis = 'latitude' | 'longitude';
 
@@ -55,6 +55,7 @@ const parseStrictly = (text: string, axis: AngleAxis): Decimal => {
   if (text.length > MAX_TEXT_LENGTH) refuse('too-long', text, MAX_TEXT_LENGTH, `at most ${MAX_TEXT_LENGTH} characters`);
   let i = skipSpaces(text, 0);
   if (i === text.length) refuse('empty', text, i, `a ${axis} such as ${example}`);
+  refuseNotFinite(text, isMinus(text[i]) || text[i] === '+' ? i + 1 : i);
   let hemisphere = hemisphereAt(text, i, axis);
   if (hemisphere !== 0) i = skipSpaces(text, i + 1);
   const signAt = i;
@@ -78,7 +79,6 @@ const parseStrictly = (text: string, axis: AngleAxis): Decimal => {
       while (isDigit(text[i])) i++;
     }
     if (i === start || (whole === 0 && i === start + 1)) {
-      if (/^(nan|inf|∞)/i.test(text.slice(i, i + 3))) refuse('not-finite', text, i, 'a finite number');
       refuse('not-a-number', text, start, `a digit: a ${axis} such as ${example}`);
     }
     if (fractionAt >= 0 && fractionAt < start)

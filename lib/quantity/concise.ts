@@ -101,8 +101,12 @@ export const concise = (
   const rounded = shift(shift(v, -last).toDecimalPlaces(0, HALF_EVEN), last);
   const first = rounded.isZero() ? uRounded.e : Math.max(rounded.e, uRounded.e);
   if (first - last >= MAX_DIGITS) {
-    const alone = (x: Decimal, o: ConciseOptions) => withoutU(x, { ...o, power: x.e });
-    return { ...alone(v, options), apart: alone(uExact, { significant: digits }) };
+    // Each with a power of its own, taken after the rounding as above.
+    const alone = (x: Decimal, significant: number, o: ConciseOptions) => {
+      const { e } = x.toSignificantDigits(significant, HALF_EVEN);
+      return withoutU(x, { ...o, power: e });
+    };
+    return { ...alone(v, MAX_WHOLE, options), apart: alone(uExact, digits, { significant: digits }) };
   }
   const power = powerFor(first, last, options);
   const { sign, integer, fraction, decimals } = pieces(rounded, last, power, options);

@@ -112,10 +112,7 @@ export const mjdToMs = (mjd: number): number => (mjd - MJD_OF_1970) * MS_PER_DAY
 /** Milliseconds since 1970-01-01T00:00Z → Modified Julian Date (UTC). */
 export const msToMjd = (ms: number): number => ms / MS_PER_DAY + MJD_OF_1970;
 
-/** Reads a Modified Julian Date from decimal text (61528.25), exactly, years 1900 to 2199.
- * @returns milliseconds since 1970-01-01T00:00Z
- * @throws {QuantityError} not-a-number, decimal-comma, out-of-range, stray-text, too-long, empty */
-export const parseMjd = (text: string): number => {
+const parseMjdStrictly = (text: string): number => {
   if (text.length > MAX_TEXT_LENGTH) bad('too-long', text, MAX_TEXT_LENGTH, 'a Modified Julian Date such as 61528.25');
   const start = skipSpaces(text, 0);
   if (start === text.length) bad('empty', text, start, 'a Modified Julian Date such as 61528.25');
@@ -135,9 +132,20 @@ export const parseMjd = (text: string): number => {
   if (mjd.lt(first) || mjd.gte(last)) {
     const fromJulian = mjd.minus('2400000.5');
     const hint = fromJulian.gte(first) && fromJulian.lt(last) ? `; a Julian Date? then write ${fromJulian}` : '';
-    bad('out-of-range', text, start, `a Modified Julian Date from ${first} to ${last}${hint}`);
+    bad('out-of-range', text, start, `a Modified Julian Date from ${first} to below ${last}${hint}`);
   }
   return mjd.minus(MJD_OF_1970).times(MS_PER_DAY).toNumber();
+};
+
+/** Reads a Modified Julian Date from decimal text (61528.25), exactly, years 1900 to 2199.
+ * @returns milliseconds since 1970-01-01T00:00Z
+ * @throws {QuantityError} not-a-number, decimal-comma, out-of-range, stray-text, too-long, empty */
+export const parseMjd = (text: string): number => {
+  try {
+    return parseMjdStrictly(text);
+  } catch (error) {
+    throw error instanceof QuantityError ? withCorrection(error, parseMjdStrictly) : error;
+  }
 };
 
 /** Milliseconds since 1970-01-01T00:00Z → ISO 8601 in UTC, without fraction if the second is whole. */

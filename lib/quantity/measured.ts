@@ -106,8 +106,10 @@ const rootSumOfSquares = (us: readonly number[]): number => {
 
 const sameUnit = (a: Unit, b: Unit): boolean => a.numerator.times(b.denominator).eq(b.numerator.times(a.denominator));
 
-/** Whether a stated u is `exact` rounded to the stated last digit (a tie may go either way). */
-const agrees = (stated: Decimal, step: Decimal, exact: Decimal): boolean => stated.minus(exact).abs().lte(step.div(2));
+/** Whether a stated u is `exact` rounded to the stated last digit (a tie may go either way). A zero says exact, whatever its
+ *  digits. */
+const agrees = (stated: Decimal, step: Decimal, exact: Decimal): boolean =>
+  stated.isZero() ? exact.isZero() : stated.minus(exact).abs().lte(step.div(2));
 
 const readObject = (
   input: Readonly<Record<string, unknown>>,

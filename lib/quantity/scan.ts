@@ -58,6 +58,11 @@ const scanDigits = (text: string, from: number, fraction: boolean): { digits: st
   return { digits, end: i };
 };
 
+/** @throws {QuantityError} not-finite where NaN or infinity is written */
+export const refuseNotFinite = (text: string, at: number): void => {
+  if (/^(nan|inf|∞)/i.test(text.slice(at, at + 3))) throw new QuantityError('not-finite', text, at, 'a finite number');
+};
+
 const scanSign = (text: string, from: number): { negative: boolean; at: number } => {
   const c = text[from];
   if (isDash(c)) throw new QuantityError('dash-for-minus', text, from, 'a minus sign (- or U+2212), not a dash');
