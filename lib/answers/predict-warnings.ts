@@ -45,8 +45,8 @@ export function combinationWarnings(
     const below = Math.min(...own) - site.W.value;
     const above = site.W.value - Math.max(...own);
     const outside = Math.max(below, above);
-    // under a hundredth of u (and the rounding of 6e7) it is nobody's concern
-    if (outside > Math.max(1e-6, 0.01 * site.W.u))
+    // under a tenth of u (and the rounding of 6e7) it is how correlated inputs work, and nobody's concern
+    if (outside > Math.max(1e-6, 0.1 * site.W.u))
       warnings.push({
         code: 'combined-outside',
         path: `sites.${site.id}`,

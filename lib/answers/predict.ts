@@ -1,6 +1,7 @@
 import type { Campaign } from '../campaign/campaign.js';
 import type { Warning } from '../campaign/fault.js';
 import { frequencyOfTransitionHz } from '../clocks/transition-frequency.js';
+import { SPEED_OF_LIGHT_SQUARED_M2_PER_S2 } from '../constants/defining-constants.js';
 import type { DeterminationObservation, Model } from '../model/model.js';
 import { hasLevel } from '../model/site-potentials.js';
 import { contributions } from '../uncertainty/budget.js';
@@ -9,7 +10,7 @@ import type { Dependent } from '../uncertainty/gradient.js';
 import { allChecks, potentialByDetermination } from './checks.js';
 import { combinationWarnings, groupWarnings } from './predict-warnings.js';
 import type { BudgetRow, Prediction } from './prediction.js';
-import { difference, estimateOf, redshiftAgainstTT, scaled } from './quantities.js';
+import { difference, estimateOf, redshiftAgainstTT } from './quantities.js';
 import { type SolvedCampaign, solveCampaign } from './solve-campaign.js';
 
 /** What offset gravity alone produces between each pair of clocks, how sure that is, and which input limits it.
@@ -51,16 +52,24 @@ export function predictionOf(solved: SolvedCampaign): Prediction {
   const links = campaign.links.map((link, i) => {
     const q = solved.links[i] ?? null;
     const hz = frequencyOfTransitionHz(campaign, campaign.clocks[model.clockIndex.get(link.to)!]!.transition);
+    const dW = q && estimate(q.dW);
+    // y = dW/c² plus a constant, so its u is that of dW
+    const y = q && dW && { value: q.y.value, u: dW.u / SPEED_OF_LIGHT_SQUARED_M2_PER_S2 };
+    let budget: readonly BudgetRow[] | undefined;
     return {
       id: link.id,
       from: link.from,
       to: link.to,
-      dW: q && estimate(q.dW),
-      y: q && estimate(q.y),
+      dW,
+      y,
       dH: q && estimate(q.dH),
       dHNormal: q?.dHNormal ? estimate(q.dHNormal) : null,
-      offsetHz: q && estimate(scaled(q.y, hz)),
-      budget: q ? budgetOf(model, q.y) : [],
+      offsetHz: y && { value: y.value * hz, u: y.u * hz },
+      // made when it is read: with hundreds of links a page shows one
+      get budget() {
+        budget ??= q ? budgetOf(model, q.y) : [];
+        return budget;
+      },
     };
   });
   const { chi2, dof } = potentials.solution;

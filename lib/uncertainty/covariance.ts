@@ -1,40 +1,33 @@
-import { chordDistanceM, geodesicDistanceM } from '../earth/geodesic-distance.js';
 import type { Gradient } from './gradient.js';
 import type { ErrorSource, Input, Place } from './inputs.js';
+import { correlationBetweenPlaces } from './place-correlation.js';
 
-/** Below this correlation an exponential is left out: 1e-20 of a variance is far under the rounding of its sum. */
-const NEGLIGIBLE_EXPONENT = 46;
-
-/** One source's places and the correlation between them. */
+/** One source's places, their slots in the flat sums, and the correlation between them. */
 interface SourceField {
   readonly source: ErrorSource;
   readonly places: Place[];
   readonly placeIndex: Map<string, number>;
-  /** dense correlation between places, only for a correlation length */
+  /** first slot of the field */
+  start: number;
+  /** dense correlation between places, made on first use and only for a correlation length */
   rho: Float64Array | null;
-}
-
-interface Part {
-  readonly field: number;
-  readonly place: number;
-  readonly u: number;
-}
-
-/** A gradient as the covariance sees it: independent parts, and per source the sum of c_i·u_i at each place. */
-interface Loading {
-  readonly gradient: Gradient;
-  readonly fields: readonly { readonly field: number; readonly sums: ReadonlyMap<number, number> }[];
 }
 
 /** Covariance Σ of the inputs. Two inputs are correlated only if they name the same source: cov = ρ·u₁·u₂ with ρ = 1 at one
  *  place; between places 1 for a plain source, its `correlation`, or exp(−d/L) with d the geodesic distance on GRS80.
- *  Σ is never formed: a variance needs only the sums per source and place (GUM 5.2.2, F.1.2.3). */
+ *  Σ is never formed: for y = Σ c·x a variance needs the independent parts, and per source the sums S = Σ c·u at each place,
+ *  since Sᵀ·R·S is what the source adds (GUM 5.2.2, F.1.2.3). */
 export class InputCovariance {
   readonly inputs: readonly Input[];
   readonly #fields: SourceField[] = [];
-  /** per input: variance of its independent parts, and its parts that name a source */
+  /** per input, variance of its independent parts */
   readonly #own: Float64Array;
-  readonly #parts: readonly (readonly Part[])[];
+  /** shared parts of all inputs, flat: those of input i are partStart[i] … partStart[i+1]−1 */
+  readonly #partStart: Int32Array;
+  readonly #partField: Int32Array;
+  readonly #partSlot: Int32Array;
+  readonly #partU: Float64Array;
+  readonly #slots: number;
 
   constructor(inputs: readonly Input[], sources: readonly ErrorSource[]) {
     this.inputs = inputs;
@@ -42,10 +35,11 @@ export class InputCovariance {
     const fieldOf = new Map<string, number>();
     for (const source of sources) {
       fieldOf.set(source.id, this.#fields.length);
-      this.#fields.push({ source, places: [], placeIndex: new Map(), rho: null });
+      this.#fields.push({ source, places: [], placeIndex: new Map(), start: 0, rho: null });
     }
-    this.#parts = inputs.map((input, i) => {
-      const shared: Part[] = [];
+    const parts: { readonly field: number; readonly place: number; readonly u: number }[] = [];
+    this.#partStart = new Int32Array(inputs.length + 1);
+    inputs.forEach((input, i) => {
       for (const part of input.parts) {
         if (part.source === null) {
           this.#own[i]! += part.u * part.u;
@@ -54,10 +48,19 @@ export class InputCovariance {
         const field = fieldOf.get(part.source);
         if (field === undefined)
           throw new Error(`internal: input ${input.path} names the unlisted source ${part.source}`);
-        shared.push({ field, place: placeOf(this.#fields[field]!, input.place), u: part.u });
+        parts.push({ field, place: placeOf(this.#fields[field]!, input.place), u: part.u });
       }
-      return shared;
+      this.#partStart[i + 1] = parts.length;
     });
+    let slots = 0;
+    for (const field of this.#fields) {
+      field.start = slots;
+      slots += field.places.length;
+    }
+    this.#slots = slots;
+    this.#partField = Int32Array.from(parts, (p) => p.field);
+    this.#partSlot = Int32Array.from(parts, (p) => this.#fields[p.field]!.start + p.place);
+    this.#partU = Float64Array.from(parts, (p) => p.u);
   }
 
   /** Correlation of a source between two of its places. */
@@ -65,37 +68,76 @@ export class InputCovariance {
     if (p === q) return 1;
     const { correlation, correlationLengthM } = field.source;
     if (correlationLengthM === null) return correlation ?? 1;
-    field.rho ??= correlationMatrix(field.places, correlationLengthM);
+    field.rho ??= correlationBetweenPlaces(field.places, correlationLengthM);
     return field.rho[p * field.places.length + q]!;
   }
 
-  #load(gradient: Gradient): Loading {
-    const sums = new Map<number, Map<number, number>>();
-    for (let k = 0; k < gradient.indices.length; k++) {
-      const c = gradient.values[k]!;
-      for (const { field, place, u } of this.#parts[gradient.indices[k]!]!) {
-        const at = sums.get(field) ?? new Map<number, number>();
-        sums.set(field, at);
-        at.set(place, (at.get(place) ?? 0) + c * u);
+  /** S per slot, and the slots that it touches per field. */
+  #load(gradient: Gradient): Load {
+    const sums = new Float64Array(this.#slots);
+    const touched: number[][] = [];
+    const seen = new Uint8Array(this.#slots);
+    const { indices, values } = gradient;
+    for (let k = 0; k < indices.length; k++) {
+      const i = indices[k]!;
+      const c = values[k]!;
+      for (let p = this.#partStart[i]!; p < this.#partStart[i + 1]!; p++) {
+        const slot = this.#partSlot[p]!;
+        sums[slot]! += c * this.#partU[p]!;
+        if (seen[slot]) continue;
+        seen[slot] = 1;
+        const field = this.#partField[p]!;
+        const list = touched[field];
+        if (list) list.push(slot);
+        else touched[field] = [slot];
       }
     }
-    return { gradient, fields: [...sums].map(([field, s]) => ({ field, sums: s })) };
+    return { sums, touched };
   }
 
-  /** R·s of one source: what each place feels of the loading. */
-  #image(field: SourceField, sums: ReadonlyMap<number, number>): Float64Array {
+  /** R·S of one source: what each of its places feels of the loading. */
+  #image(field: SourceField, { sums }: Load, touched: readonly number[]): Float64Array {
     const n = field.places.length;
     const image = new Float64Array(n);
-    if (field.source.correlationLengthM === null) {
-      const rho = field.source.correlation ?? 1;
+    const { start, source } = field;
+    if (source.correlationLengthM === null) {
+      const rho = source.correlation ?? 1;
       let total = 0;
-      for (const s of sums.values()) total += s;
+      for (const slot of touched) total += sums[slot]!;
       image.fill(rho * total);
-      for (const [p, s] of sums) image[p]! += (1 - rho) * s;
+      for (const slot of touched) image[slot - start]! += (1 - rho) * sums[slot]!;
       return image;
     }
-    for (const [p, s] of sums) for (let q = 0; q < n; q++) image[q]! += this.#rho(field, p, q) * s;
+    field.rho ??= correlationBetweenPlaces(field.places, source.correlationLengthM);
+    for (const slot of touched) {
+      const s = sums[slot]!;
+      const row = (slot - start) * n;
+      for (let q = 0; q < n; q++) image[q]! += field.rho[row + q]! * s;
+    }
     return image;
+  }
+
+  /** Sᵀ·R·S of one source. */
+  #quadratic(field: SourceField, { sums }: Load, touched: readonly number[]): number {
+    const { start, source } = field;
+    let squares = 0;
+    for (const slot of touched) squares += sums[slot]! * sums[slot]!;
+    if (source.correlationLengthM === null) {
+      const rho = source.correlation ?? 1;
+      let total = 0;
+      for (const slot of touched) total += sums[slot]!;
+      return rho * total * total + (1 - rho) * squares;
+    }
+    field.rho ??= correlationBetweenPlaces(field.places, source.correlationLengthM);
+    const n = field.places.length;
+    let mixed = 0;
+    for (let a = 1; a < touched.length; a++) {
+      const row = (touched[a]! - start) * n - start;
+      let inner = 0;
+      for (let b = 0; b < a; b++) inner += field.rho[row + touched[b]!]! * sums[touched[b]!]!;
+      mixed += sums[touched[a]!]! * inner;
+    }
+    return squares + 2 * mixed;
   }
 
   /** Variance u²(y) = c·Σ·cᵀ. */
@@ -106,61 +148,63 @@ export class InputCovariance {
       const c = gradient.values[k]!;
       sum += c * c * this.#own[gradient.indices[k]!]!;
     }
-    for (const { field, sums } of load.fields) {
-      const image = this.#image(this.#fields[field]!, sums);
-      for (const [p, s] of sums) sum += s * image[p]!;
-    }
+    load.touched.forEach((touched, field) => {
+      sum += this.#quadratic(this.#fields[field]!, load, touched);
+    });
     // a difference that cancels exactly may come out at −1e-16 of its terms
     return Math.max(0, sum);
   }
 
   /** (Σ·cᵀ)_i for every input i: the covariance of y with each input. */
   withInputs(gradient: Gradient): Float64Array {
-    const { fields } = this.#load(gradient);
+    const load = this.#load(gradient);
     const out = new Float64Array(this.inputs.length);
     for (let k = 0; k < gradient.indices.length; k++) {
       const i = gradient.indices[k]!;
       out[i] = gradient.values[k]! * this.#own[i]!;
     }
-    const images = new Map(fields.map(({ field, sums }) => [field, this.#image(this.#fields[field]!, sums)]));
-    this.#parts.forEach((parts, i) => {
-      for (const { field, place, u } of parts) {
-        const image = images.get(field);
-        if (image) out[i]! += u * image[place]!;
-      }
-    });
+    const images = this.#images(load);
+    for (let i = 0; i < out.length; i++)
+      for (let p = this.#partStart[i]!; p < this.#partStart[i + 1]!; p++)
+        out[i]! += this.#partU[p]! * images[this.#partSlot[p]!]!;
     return out;
   }
 
-  /** Covariance matrix of several quantities, rows of {@link Float64Array}. */
+  /** Images of all touched sources, by slot; 0 where nothing is felt. */
+  #images(load: Load): Float64Array {
+    const images = new Float64Array(this.#slots);
+    load.touched.forEach((touched, index) => {
+      const field = this.#fields[index]!;
+      images.set(this.#image(field, load, touched), field.start);
+    });
+    return images;
+  }
+
+  /** Covariance matrix of several quantities, as rows. */
   matrix(gradients: readonly Gradient[]): Float64Array[] {
     const loads = gradients.map((g) => this.#load(g));
     const rows = gradients.map(() => new Float64Array(gradients.length));
     const own = new Float64Array(this.inputs.length);
-    loads.forEach((a, i) => {
-      for (let k = 0; k < a.gradient.indices.length; k++) {
-        const x = a.gradient.indices[k]!;
-        own[x] = a.gradient.values[k]! * this.#own[x]!;
-      }
-      const images = new Map(a.fields.map(({ field, sums }) => [field, this.#image(this.#fields[field]!, sums)]));
+    gradients.forEach((a, i) => {
+      for (let k = 0; k < a.indices.length; k++) own[a.indices[k]!] = a.values[k]! * this.#own[a.indices[k]!]!;
+      const images = this.#images(loads[i]!);
       for (let j = i; j < loads.length; j++) {
-        const b = loads[j]!;
         let sum = 0;
-        const { indices, values } = b.gradient;
+        const { indices, values } = gradients[j]!;
         for (let k = 0; k < indices.length; k++) sum += own[indices[k]!]! * values[k]!;
-        for (const { field, sums } of b.fields) {
-          const image = images.get(field);
-          if (image) for (const [p, s] of sums) sum += image[p]! * s;
-        }
+        const { sums, touched } = loads[j]!;
+        touched.forEach((slots) => {
+          for (const slot of slots) sum += images[slot]! * sums[slot]!;
+        });
         rows[i]![j] = sum;
         rows[j]![i] = sum;
       }
-      for (const x of a.gradient.indices) own[x] = 0;
+      for (const x of a.indices) own[x] = 0;
     });
     return rows;
   }
 
-  /** Inputs and correlations of one source, for checks and for drawing its reach. */
+  /** Places and correlations of one source, for checks and for drawing its reach; null for an unknown id. */
   sourceField(id: string): { readonly places: readonly Place[]; rho(p: number, q: number): number } | null {
     const field = this.#fields.find((f) => f.source.id === id);
     return field ? { places: field.places, rho: (p, q) => this.#rho(field, p, q) } : null;
@@ -169,11 +213,21 @@ export class InputCovariance {
   /** Covariance of two inputs. */
   between(i: number, j: number): number {
     let sum = i === j ? this.#own[i]! : 0;
-    for (const a of this.#parts[i]!)
-      for (const b of this.#parts[j]!)
-        if (a.field === b.field) sum += a.u * b.u * this.#rho(this.#fields[a.field]!, a.place, b.place);
+    for (let p = this.#partStart[i]!; p < this.#partStart[i + 1]!; p++)
+      for (let q = this.#partStart[j]!; q < this.#partStart[j + 1]!; q++) {
+        if (this.#partField[p] !== this.#partField[q]) continue;
+        const field = this.#fields[this.#partField[p]!]!;
+        const rho = this.#rho(field, this.#partSlot[p]! - field.start, this.#partSlot[q]! - field.start);
+        sum += this.#partU[p]! * this.#partU[q]! * rho;
+      }
     return sum;
   }
+}
+
+interface Load {
+  readonly sums: Float64Array;
+  /** per field index (sparse), its touched slots */
+  readonly touched: readonly (readonly number[])[];
 }
 
 function placeOf(field: SourceField, place: Place): number {
@@ -184,21 +238,4 @@ function placeOf(field: SourceField, place: Place): number {
     field.places.push(place);
   }
   return index;
-}
-
-function correlationMatrix(places: readonly Place[], lengthM: number): Float64Array {
-  const n = places.length;
-  const rho = new Float64Array(n * n);
-  for (let p = 0; p < n; p++) {
-    rho[p * n + p] = 1;
-    for (let q = p + 1; q < n; q++) {
-      const a = places[p]!.position;
-      const b = places[q]!.position;
-      if (!a || !b) throw new Error(`internal: ${places[a ? q : p]!.key} has no position for a correlation length`);
-      const near = chordDistanceM(a, b) < NEGLIGIBLE_EXPONENT * lengthM;
-      rho[p * n + q] = near ? Math.exp(-geodesicDistanceM(a, b) / lengthM) : 0;
-      rho[q * n + p] = rho[p * n + q]!;
-    }
-  }
-  return rho;
 }

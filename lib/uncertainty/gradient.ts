@@ -14,17 +14,25 @@ export interface Dependent {
 
 /** Σ weight·gradient. */
 export function combineGradients(terms: readonly (readonly [weight: number, gradient: Gradient])[]): Gradient {
-  if (terms.length === 1 && terms[0]![0] === 1) return terms[0]![1];
-  const sum = new Map<number, number>();
-  for (const [weight, { indices, values }] of terms) {
-    if (weight === 0) continue;
-    for (let k = 0; k < indices.length; k++) {
-      const i = indices[k]!;
-      sum.set(i, (sum.get(i) ?? 0) + weight * values[k]!);
-    }
+  let sum = ZERO_GRADIENT;
+  for (const [weight, gradient] of terms) if (weight !== 0) sum = addScaledGradient(sum, weight, gradient);
+  return sum;
+}
+
+/** a + weight·b by merging the two sorted lists. */
+function addScaledGradient(a: Gradient, weight: number, b: Gradient): Gradient {
+  if (a.indices.length === 0) return weight === 1 ? b : { indices: b.indices, values: b.values.map((v) => weight * v) };
+  const indices: number[] = [];
+  const values: number[] = [];
+  let i = 0;
+  let j = 0;
+  while (i < a.indices.length || j < b.indices.length) {
+    const x = i < a.indices.length ? a.indices[i]! : Number.POSITIVE_INFINITY;
+    const y = j < b.indices.length ? b.indices[j]! : Number.POSITIVE_INFINITY;
+    indices.push(Math.min(x, y));
+    values.push((x <= y ? a.values[i++]! : 0) + (y <= x ? weight * b.values[j++]! : 0));
   }
-  const indices = [...sum.keys()].sort((a, b) => a - b);
-  return { indices, values: indices.map((i) => sum.get(i)!) };
+  return { indices, values };
 }
 
 /** Gradient from pairs of input index and derivative; an index named twice adds up. */

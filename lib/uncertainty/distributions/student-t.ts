@@ -45,17 +45,21 @@ export const studentTCdf = (t: number, nu: number): number => {
   return tail < 0.25 ? 1 - tail : 0.5 + centre;
 };
 
+/** ln of the density relative to φ(0), by Stirling's formula with its exact error for Γ(a+½)/Γ(a), a = ν/2, so that no Γ and no
+ *  power grows large. */
+const logRelativeDensity = (t: number, nu: number): number => {
+  const a = nu / 2;
+  const gammas = stirlingError(a + 0.5) - stirlingError(a) + a * Math.log1p(1 / nu) - 0.5;
+  return gammas - (a + 0.5) * Math.log1p((t / nu) * t);
+};
+
 /** Density of Student's t on ν degrees of freedom (ν = ∞: normal). */
 export const studentTDensity = (t: number, nu: number): number => {
   requireNumber(t, 't');
   requireDegreesOfFreedom(nu);
   if (Math.abs(t) === Infinity) return 0;
   if (nu === Infinity) return normalDensity(t);
-  // Γ(a+½)/Γ(a) by Stirling's formula with its exact error, a = ν/2, so that no Γ and no power grows large.
-  const a = nu / 2;
-  const exponent =
-    stirlingError(a + 0.5) - stirlingError(a) + a * Math.log1p(1 / nu) - 0.5 - (a + 0.5) * Math.log1p((t / nu) * t);
-  return normalDensity(0) * Math.exp(exponent);
+  return normalDensity(0) * Math.exp(logRelativeDensity(t, nu));
 };
 
 /** t > 0 with the given probability above it, q < ¼: Newton's method on ln(tail) against ln t, which is concave, so that
@@ -71,7 +75,9 @@ const fromTail = (q: number, nu: number): number => {
       t /= 2;
       continue;
     }
-    const step = (tail * Math.log(tail / q)) / (t * studentTDensity(t, nu));
+    // t·density in one exponential: the density alone underflows long before the tail does
+    const slope = normalDensity(0) * Math.exp(logRelativeDensity(t, nu) + Math.log(t));
+    const step = (tail * Math.log(tail / q)) / slope;
     const next = step < -0.9 * 700 ? t / 2 : t * Math.exp(step);
     if (Math.abs(step) < CONVERGED) return next;
     t = next;
