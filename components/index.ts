@@ -1,7 +1,9 @@
 /** All elements of Plumbtick, registered; for one alone take its own `….define.js`. */
 import './floors/plumb-floors.define.js';
+import './pair/plumb-pair.define.js';
 
 export { version } from '../lib/constants/version.js';
 export { PlumbFloors } from './floors/plumb-floors.js';
+export { PlumbPair } from './pair/plumb-pair.js';
 export { PlumbElement } from './plumb-element.js';
 export type { PlumbChange } from './shared/article-element.js';

@@ -88,18 +88,20 @@ export class PlumbFloors extends ArticleElement<Shown> {
   }
 
   #inputs(): TemplateResult {
-    const placeNeeded = this.text('g') === null || this.text('lat') !== null || this.text('height') !== null;
+    const place = this.text('lat') !== null || this.text('height') !== null;
+    const g = place && this.text('g') === null ? 'from latitude and height' : 'or latitude and height';
     return html`<tbody>
-      ${this.fieldRow('dh', html`height Δ<i class="s">H</i>`, '12.348(3) m')}
-      ${this.fieldRow('g', html`gravity <i class="s">g</i>`, placeNeeded && this.text('lat') ? 'from latitude and height' : 'or latitude and height')}
+      ${this.fieldRow('dh', html`height Δ<i class="s">H</i>`, { placeholder: '12.348(3) m' })}
+      ${this.fieldRow('g', html`gravity <i class="s">g</i>`, { placeholder: g })}
       ${
-        placeNeeded
-          ? html`${this.fieldRow('lat', 'latitude', '52.3')} ${this.fieldRow('height', 'height above the sea', '80 m')}`
+        place || this.text('g') === null
+          ? html`${this.fieldRow('lat', 'latitude', { placeholder: '52.3' })}
+            ${this.fieldRow('height', 'height above the sea', { placeholder: '80 m' })}`
           : nothing
       }
-      ${this.fieldRow('gradient', html`gradient <i class="s">Γ</i>`, '3.086e-6 s⁻², u 10 %')}
-      ${this.fieldRow('transition', 'transition', 'none', TRANSITIONS)}
-      ${this.fieldRow('measured', html`measured <i class="s">y</i>`, 'none')}
+      ${this.fieldRow('gradient', html`gradient <i class="s">Γ</i>`, { placeholder: '3.086e-6 s⁻², u 10 %' })}
+      ${this.fieldRow('transition', 'transition', { choices: TRANSITIONS })}
+      ${this.fieldRow('measured', html`measured <i class="s">y</i>`, { placeholder: 'none' })}
     </tbody>`;
   }
 

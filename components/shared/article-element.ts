@@ -47,6 +47,17 @@ const attributeFault = ({ code, path, found, expected, column }: Fault): Attribu
     write,
   };
 };
+export interface FieldOptions {
+  /** what is used, or wanted, where nothing is given */
+  readonly placeholder?: string;
+  /** words to choose from, instead of free text */
+  readonly choices?: readonly string[];
+  /** the choice of none of them */
+  readonly unset?: string;
+  /** label where no `<label>` stands */
+  readonly spoken?: string;
+}
+
 /** An element that works from its attributes alone and whose values a reader can type over.
  *
  *  Stated values come from attributes (properties of the same name, camel case); what is typed stands over them, marked
@@ -193,22 +204,18 @@ export abstract class ArticleElement<Answer> extends PlumbElement {
     </div>`;
   }
 
-  /** A row of the form: label, field, and what is to be said about it. */
-  protected fieldRow(
-    name: string,
-    label: TemplateResult | string,
-    placeholder: string,
-    choices: readonly string[] | null = null,
-  ): TemplateResult {
+  /** The field of one value and what is to be said about it. @param choices words to choose from; null: free text */
+  protected field(name: string, options: FieldOptions = {}): TemplateResult {
+    const { placeholder = '', choices = null, unset = 'none', spoken } = options;
     const text = this.#edits.get(name) ?? this.stated(name) ?? '';
-    const edited = this.#edits.has(name);
     const invalid = this.#settled && this.#faultOf(name) !== null ? 'true' : 'false';
     const under = this.#underField(name);
     const describedBy = under === nothing ? nothing : `n-${name}`;
     const field = choices
       ? html`<select
-          class="field"
+          class="field ${this.#edits.has(name) ? 'ed' : ''}"
           id="f-${name}"
+          aria-label=${spoken ?? nothing}
           aria-invalid=${invalid}
           aria-describedby=${describedBy}
           @change=${(event: Event) => this.#type(name, (event.target as HTMLSelectElement).value, true)}
@@ -216,26 +223,36 @@ export abstract class ArticleElement<Answer> extends PlumbElement {
           ${[...(text === '' || choices.includes(text) ? [] : [text]), ...choices].map(
             (choice) => html`<option value=${choice} ?selected=${choice === text}>${choice}</option>`,
           )}
-          <option value="" ?selected=${text === ''}>none</option>
+          <option value="" ?selected=${text === ''}>${unset}</option>
         </select>`
       : html`<input
-          class="field"
+          class="field ${this.#edits.has(name) ? 'ed' : ''}"
           id="f-${name}"
           type="text"
           autocomplete="off"
           autocapitalize="off"
           spellcheck="false"
           placeholder=${placeholder}
+          aria-label=${spoken ?? nothing}
           aria-invalid=${invalid}
           aria-describedby=${describedBy}
           .value=${text}
           @input=${(event: Event) => this.#type(name, (event.target as HTMLInputElement).value, false)}
           @change=${(event: Event) => this.#type(name, (event.target as HTMLInputElement).value, true)}
         />`;
-    return html`<tr class="in ${edited ? 'ed' : ''} ${text === '' ? 'no-print' : ''}">
+    return html`${field}${under}`;
+  }
+
+  /** A row of the form: label and field. */
+  protected fieldRow(name: string, label: TemplateResult | string, options: FieldOptions = {}): TemplateResult {
+    return html`<tr class="in ${this.#edits.has(name) ? 'ed' : ''} ${this.text(name) === null ? 'no-print' : ''}">
       <th scope="row"><label for="f-${name}">${label}</label></th>
-      <td colspan="2">${field}${under}</td>
+      <td colspan="2">${this.field(name, options)}</td>
     </tr>`;
+  }
+
+  protected isEdited(name: string): boolean {
+    return this.#edits.has(name);
   }
 
   protected cite(answer: Answer, computed: string): TemplateResult {

@@ -90,7 +90,7 @@ export const articleStyles = css`
     bottom: 0;
     border-left: var(--p-w-bar) solid var(--p-accent);
   }
-  tr.ed .field {
+  .field.ed {
     font-weight: 700;
     color: var(--p-accent);
   }
@@ -150,7 +150,100 @@ export const articleStyles = css`
   .pf .note {
     font-family: inherit;
   }
+  .sites {
+    margin-top: 12px;
+  }
+  .sites thead th + th {
+    text-align: right;
+    padding-left: 14px;
+  }
+  .sites td + td {
+    padding-left: 14px;
+  }
+  .sites tr.in td {
+    width: 37%;
+  }
+  .sites tr.in td[colspan] {
+    width: 74%;
+  }
+  .budget {
+    margin-top: 16px;
+  }
+  .pf .budget td,
+  .pf .budget tbody th {
+    padding: 3px 0;
+  }
+  .pf .budget td {
+    padding-left: 14px;
+    text-align: right;
+  }
+  .budget thead th {
+    padding-bottom: 4px;
+  }
+  .budget thead th + th {
+    text-align: right;
+    padding-left: 14px;
+  }
+  .pf .budget .bw {
+    width: 130px;
+    text-align: left;
+    vertical-align: middle;
+  }
+  .budget tbody tr {
+    border-color: var(--p-hair);
+  }
+  .budget tr.kid {
+    border-top: 0;
+  }
+  .pf .budget tr.kid th {
+    padding-left: 18px;
+    position: relative;
+  }
+  .budget tr.kid th::before {
+    content: '';
+    position: absolute;
+    left: 5px;
+    top: 0;
+    bottom: 0;
+    border-left: 1px solid var(--p-ink);
+  }
+  .budget tr.kid.last th::before {
+    bottom: 50%;
+  }
+  .budget tr.kid th::after {
+    content: '';
+    position: absolute;
+    left: 5px;
+    top: 50%;
+    width: 8px;
+    border-top: 1px solid var(--p-ink);
+  }
+  .budget tr.neg .share {
+    color: var(--p-caution);
+    font-weight: 700;
+  }
+  .disclose {
+    margin-top: 10px;
+    font-size: 13px;
+  }
+  @media screen {
+    .closed {
+      display: none;
+    }
+  }
   @container plumb (max-width: 479px) {
+    .budget .own-u {
+      display: none;
+    }
+    .pf .budget td,
+    .budget thead th + th,
+    .sites td + td,
+    .sites thead th + th {
+      padding-left: 8px;
+    }
+    .pf .budget .bw {
+      width: 92px;
+    }
     .body {
       grid-template-columns: minmax(0, 1fr);
     }
@@ -166,10 +259,13 @@ export const articleStyles = css`
     .pf {
       break-inside: avoid;
     }
-    tr.ed .field,
+    .field.ed,
     tr.ed th::before {
       color: inherit;
       border: 0;
+    }
+    .under .flt {
+      display: none;
     }
   }
 `;

@@ -1,39 +1,13 @@
 import type { TideSystem } from '../campaign/campaign.js';
 import { CampaignError, type Fault, type Warning } from '../campaign/fault.js';
-import { readCampaignValue } from '../campaign/read.js';
 import { geodesicDistanceM } from '../earth/geodesic-distance.js';
 import { degToRad } from '../quantity/radians.js';
+import { campaignOfPair, checkPair, GEOID, type PairInput, type PairSite } from './pair-campaign.js';
+import { pairWarnings } from './pair-warnings.js';
 import { predict } from './predict.js';
-import type { BudgetRow, Estimate, LinkPrediction, Prediction } from './prediction.js';
+import type { BudgetRow, Estimate, Prediction } from './prediction.js';
 
-/** One of two sites: where it is and what its height comes from. */
-export interface PairSite {
-  readonly name: string;
-  /** geodetic, degrees, north and east positive */
-  readonly latitudeDeg: number;
-  readonly longitudeDeg: number;
-  /** ellipsoidal height h, m */
-  readonly hM: Estimate;
-  /** height anomaly ζ, or geoid height N, m: exactly one of the two */
-  readonly zetaM: Estimate | null;
-  readonly nM: Estimate | null;
-  /** gravity at the marker, m/s²; null: normal gravity there */
-  readonly gMs2: Estimate | null;
-}
-
-export interface PairInput {
-  readonly a: PairSite;
-  readonly b: PairSite;
-  /** permanent-tide system of the printed potentials */
-  readonly tide: TideSystem;
-  /** system in which both h, and both ζ or N, are given; null: not known, taken as tide-free and zero-tide with a warning */
-  readonly hTide: TideSystem | null;
-  readonly geoidTide: TideSystem | null;
-  /** correlation of the errors of the two ζ or N, −1…1; null: not known, taken as 0 with a warning */
-  readonly correlation: number | null;
-  /** transition for the offset in hertz, with a recommended frequency; null: none wanted */
-  readonly transition: string | null;
-}
+export type { PairInput, PairSite } from './pair-campaign.js';
 
 /** Rows of the budget that name one source stand together; the others are groups of one. */
 export interface PairBudgetGroup {
@@ -73,16 +47,15 @@ export interface PairAnswer {
   readonly warnings: readonly Warning[];
 }
 
-const SYSTEMS: readonly TideSystem[] = ['mean', 'zero', 'free'];
-const GEOID = 'geoid';
-/** An example of what one model at both sites does, for the warning that none was stated. */
-const SHARED_EXAMPLE = 0.9;
+/** Warnings of a campaign that two sites with one model say better: by what they do to the difference. */
+const RESTATED = new Set(['tide-label-missing', 'default-gravity']);
 
 /** Two sites by GNSS and a (quasi)geoid model, marker to marker: potential difference, offset and what limits it.
  *  A campaign of two clocks at their markers, answered by {@link predict}.
  * @throws {CampaignError} with faults whose paths are option names (`a-lat`, `b-zeta`, `correlation`) */
 export function pair(input: PairInput): PairAnswer {
-  const { prediction, warnings } = answer(input);
+  checkPair(input);
+  const prediction = answer(input);
   const link = prediction.links[0]!;
   const { dW, y, dH, dHNormal, offsetHz } = link;
   if (!dW || !y || !dH || !dHNormal || !offsetHz) throw new Error('pair: a site without a level');
@@ -105,11 +78,10 @@ export function pair(input: PairInput): PairAnswer {
     budget,
     groups: groupsOf(budget, input, y),
     warnings: [
-      ...[...warnings, ...prediction.warnings]
-        .filter(({ code }) => code !== 'tide-label-missing')
+      ...prediction.warnings
+        .filter(({ code }) => !RESTATED.has(code))
         .map((warning) => ({ ...warning, path: optionOf(warning.path) })),
-      ...tideWarnings(input, link),
-      ...correlationWarning(input, y, dW, dH),
+      ...pairWarnings(input, link, (changed) => answer(changed).links[0]!),
     ],
   };
 }
@@ -122,43 +94,14 @@ function distanceM({ a, b }: PairInput): number {
   return geodesicDistanceM(position(a), position(b));
 }
 
-function answer(input: PairInput): { readonly prediction: Prediction; readonly warnings: readonly Warning[] } {
+const answer = (input: PairInput): Prediction => {
   try {
-    const { campaign, warnings } = readCampaignValue(campaignValue(input));
-    return { prediction: predict(campaign), warnings };
+    return predict(campaignOfPair(input));
   } catch (error) {
     if (!(error instanceof CampaignError)) throw error;
     throw new CampaignError(error.faults.map((fault): Fault => ({ ...fault, path: optionOf(fault.path) })));
   }
-}
-
-/** The campaign of two clocks that stand on their markers. */
-function campaignValue({ a, b, tide, hTide, geoidTide, correlation, transition }: PairInput) {
-  const measured = ({ value, u }: Estimate, more: Record<string, unknown> = {}) => ({ value, u, ...more });
-  const labelled = (system: TideSystem | null) => (system === null ? {} : { tide: system });
-  const shared = correlation === null ? {} : { source: GEOID };
-  const site = (id: string, { latitudeDeg, longitudeDeg, hM, zetaM, nM, gMs2 }: PairSite) => ({
-    id,
-    lat: latitudeDeg,
-    lon: longitudeDeg,
-    h: measured(hM, labelled(hTide)),
-    ...(gMs2 ? { g: measured(gMs2) } : {}),
-    determinations: [
-      zetaM
-        ? { kind: 'gnss-quasigeoid', zeta: measured(zetaM, { ...labelled(geoidTide), ...shared }) }
-        : { kind: 'gnss-geoid', ...(nM ? { N: measured(nM, { ...labelled(geoidTide), ...shared }) } : {}) },
-    ],
-  });
-  const clock = (id: string) => ({ id, site: id, transition: transition ?? '87Sr' });
-  return {
-    format: 'plumbtick-campaign/1',
-    tide,
-    sources: correlation === null ? [] : [{ id: GEOID, correlation }],
-    sites: [site('a', a), site('b', b)],
-    clocks: [clock('a'), clock('b')],
-    links: [{ id: 'ab', from: 'a', to: 'b' }],
-  };
-}
+};
 
 /** Path in the campaign → name of the option it came from. */
 function optionOf(path: string): string {
@@ -187,45 +130,3 @@ function groupsOf(budget: readonly BudgetRow[], { correlation }: PairInput, y: E
     : budget.map((row) => group(null, [row]));
   return groups.sort((one, other) => Math.abs(other.share) - Math.abs(one.share));
 }
-
-/** A label missing at both sites is the same mistake twice: what counts is its difference, found by trying the other systems. */
-function tideWarnings(input: PairInput, { dH, y }: LinkPrediction): Warning[] {
-  const missing = [
-    { option: 'h-tide', key: 'hTide', what: 'h', taken: 'free' },
-    { option: 'geoid-tide', key: 'geoidTide', what: input.a.zetaM ? 'ζ' : 'N', taken: 'zero' },
-  ] as const;
-  return missing.flatMap(({ option, key, what, taken }) => {
-    if (input[key] !== null) return [];
-    const others = SYSTEMS.filter((system) => system !== taken).map((system) => {
-      const link = answer({ ...input, [key]: system }).prediction.links[0]!;
-      return { system, dH: link.dH!.value - dH!.value, y: link.y!.value - y!.value };
-    });
-    const worst = others.reduce((one, other) => (Math.abs(other.y) > Math.abs(one.y) ? other : one));
-    return [
-      {
-        code: 'tide-label-missing',
-        path: option,
-        message: `no permanent-tide label for ${what}; taken as ${taken} at both sites. If it is ${worst.system}, the difference is off by ${sizeText(worst.dH, worst.y)}. Write ${option}="${taken}" or what is right.`,
-      },
-    ];
-  });
-}
-
-function correlationWarning(input: PairInput, y: Estimate, dW: Estimate, dH: Estimate): Warning[] {
-  const geoid = [input.a.zetaM ?? input.a.nM, input.b.zetaM ?? input.b.nM];
-  if (input.correlation !== null || geoid.some((one) => !one || one.u === 0)) return [];
-  const metresPerY = dW.value === 0 ? 0 : dH.value / y.value;
-  const shared = answer({ ...input, correlation: SHARED_EXAMPLE }).prediction.links[0]!.y!;
-  const length = (uy: number) => `${(1000 * Math.abs(metresPerY) * uy).toPrecision(2)} mm`;
-  const symbol = input.a.zetaM && input.b.zetaM ? 'ζ' : input.a.zetaM || input.b.zetaM ? 'ζ and N' : 'N';
-  return [
-    {
-      code: 'correlation-missing',
-      path: 'correlation',
-      message: `the errors of ${symbol} at the two sites are taken as independent. If one model serves both, what they share cancels: with ρ = ${SHARED_EXAMPLE} u would be ${length(shared.u)} instead of ${length(y.u)}. Write correlation="0" or what is right.`,
-    },
-  ];
-}
-
-const sizeText = (metres: number, y: number): string =>
-  `${Number((1000 * Math.abs(metres)).toPrecision(2))} mm (${Math.abs(y).toExponential(1)})`;
