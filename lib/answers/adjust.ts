@@ -12,6 +12,7 @@ import {
 } from '../model/network-observations.js';
 import { plannedCovariance } from '../model/planned-covariance.js';
 import { hasLevel } from '../model/site-potentials.js';
+import { sizeText } from '../quantity/size.js';
 import { NETWORK_TEST } from '../uncertainty/detection.js';
 import { chiSquareUpperTail } from '../uncertainty/distributions/index.js';
 import { ContradictionError } from '../uncertainty/exact-relations.js';
@@ -76,7 +77,7 @@ export function solveNetwork(solved: SolvedCampaign, planned: boolean): SolvedNe
         faultAt(
           'contradiction',
           observations[e.row]!.id,
-          `an exact value that contradicts ${e.others.map((i) => observations[i]!.id).join(', ')} by ${Math.abs(e.misclosure).toPrecision(3)} m²/s²`,
+          `an exact value that contradicts ${e.others.map((i) => observations[i]!.id).join(', ')} by ${sizeText(Math.abs(e.misclosure), 3)} m²/s²`,
           'agreement within 1e-6 m²/s², or an uncertainty on one of them',
         ),
       ]);

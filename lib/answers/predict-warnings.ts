@@ -2,6 +2,7 @@ import type { Warning } from '../campaign/fault.js';
 import { W0_IHRS, W0_TT } from '../constants/defining-constants.js';
 import type { Model } from '../model/model.js';
 import type { SitePotentials } from '../model/site-potentials.js';
+import { sizeText } from '../quantity/size.js';
 import type { Prediction, SitePrediction } from './prediction.js';
 
 /** Sites tied only among themselves: their level is unknown, and how to give it one. */
@@ -34,7 +35,7 @@ export function combinationWarnings(
     warnings.push({
       code: 'determinations-disagree',
       path: 'sites',
-      message: `the determinations disagree more than their uncertainties allow: χ² = ${combination.chi2.toFixed(1)} at ${combination.dof} degrees of freedom, p = ${combination.p.toPrecision(2)}. u is not scaled for it.`,
+      message: `the determinations disagree more than their uncertainties allow: χ² = ${combination.chi2.toFixed(1)} at ${combination.dof} degrees of freedom, p = ${sizeText(combination.p)}. u is not scaled for it.`,
     });
   sites.forEach((site, s) => {
     const fitted = model.determinations.filter((d) => d.site === s && !d.check && !d.candidate).map((d) => d.path);
@@ -50,7 +51,7 @@ export function combinationWarnings(
       warnings.push({
         code: 'combined-outside',
         path: `sites.${site.id}`,
-        message: `the combined W lies ${outside.toPrecision(2)} m²/s² outside all of its determinations: correlated inputs pull it there. Check the sources named by them.`,
+        message: `the combined W lies ${sizeText(outside)} m²/s² outside all of its determinations: correlated inputs pull it there. Check the sources named by them.`,
       });
   });
   const datumsInUse = new Set(model.referencePotential.map((r) => r.datum));

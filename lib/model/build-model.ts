@@ -3,6 +3,7 @@ import type { Warning } from '../campaign/fault.js';
 import { transitionFrequency } from '../clocks/transition-frequency.js';
 import { SPEED_OF_LIGHT_SQUARED_M2_PER_S2 } from '../constants/defining-constants.js';
 import { tideConversion } from '../earth/permanent-tide.js';
+import { offsetSizeText, sizeText } from '../quantity/size.js';
 import { InputCovariance } from '../uncertainty/covariance.js';
 import { type ErrorSource, InputRegister } from '../uncertainty/inputs.js';
 import { checkPositiveSemidefinite } from '../uncertainty/positive-semidefinite.js';
@@ -148,7 +149,7 @@ function registerFrequencyInputs(
       warnings.push({
         code: 'default-frequency-offset',
         path,
-        message: `no measured ratio; the recommended value's u = ${u.toPrecision(2)} is used, which is ${((u * SPEED_OF_LIGHT_SQUARED_M2_PER_S2) / 9.81).toPrecision(2)} m of height in a link to another transition. State transitions[].offset from a measured ratio.`,
+        message: `no measured ratio; the recommended value's u = ${sizeText(u)} is used, which is ${sizeText((u * SPEED_OF_LIGHT_SQUARED_M2_PER_S2) / 9.81)} m of height in a link to another transition. State transitions[].offset from a measured ratio.`,
       });
   }
   return { clock, link, transition };
@@ -167,7 +168,7 @@ function notMeanTideWarnings(
     return {
       code: 'not-mean-tide',
       path: `links.${l.id}`,
-      message: `dW is printed in ${campaign.tide} tide, y is what clocks feel, in mean tide: y differs from dW/c² by ${(y * 1e18).toFixed(2)}e-18.`,
+      message: `dW is printed in ${campaign.tide} tide, y is what clocks feel, in mean tide: y differs from dW/c² by ${offsetSizeText(y)}.`,
     };
   });
 }

@@ -1,6 +1,7 @@
 import type { Link } from '../campaign/campaign.js';
 import { CampaignError, faultAt } from '../campaign/fault.js';
 import { SPEED_OF_LIGHT_SQUARED_M2_PER_S2 } from '../constants/defining-constants.js';
+import { sizeText } from '../quantity/size.js';
 import { combineGradients, type Dependent, type Gradient } from '../uncertainty/gradient.js';
 import { type MeasuredOffset, measuredOffset, toMeanTideOffset, transitionOffset } from './frequency-comparison.js';
 import { clocksOfLink, type DeterminationObservation, type Model, siteIndexOfClock } from './model.js';
@@ -119,8 +120,8 @@ export function fittedMeasurements(model: Model): MeasuredOffset[] {
       faultAt(
         'nothing-left',
         `measurements.${o.index}.y`,
-        `u = ${o.measurement.y.u.toPrecision(3)} with "includesSystematic"`,
-        `more than the systematics of its clocks and link, ${Math.sqrt(model.covariance.variance(o.systematic)).toPrecision(3)}`,
+        `u = ${sizeText(o.measurement.y.u)} with "includesSystematic"`,
+        `more than the systematics of its clocks and link, ${sizeText(Math.sqrt(model.covariance.variance(o.systematic)), 3)}`,
       ),
     );
   if (faults.length > 0) throw new CampaignError(faults);

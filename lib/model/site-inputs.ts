@@ -1,8 +1,13 @@
 import type { Campaign, Clock, Measured, Site, UncertaintyPart } from '../campaign/campaign.js';
 import type { Warning } from '../campaign/fault.js';
-import { FREE_AIR_GRADIENT, HELMERT_FACTOR } from '../constants/defining-constants.js';
+import {
+  FREE_AIR_GRADIENT,
+  HELMERT_FACTOR,
+  SPEED_OF_LIGHT_SQUARED_M2_PER_S2,
+} from '../constants/defining-constants.js';
 import { GRS80 } from '../earth/level-ellipsoid.js';
 import { normalGravity } from '../earth/normal-field.js';
+import { offsetSizeText, sizeText } from '../quantity/size.js';
 import type { ErrorSource, InputRegister, Place } from '../uncertainty/inputs.js';
 import { statedHeightM } from './first-determination.js';
 
@@ -83,6 +88,6 @@ export function longTieWarning(site: Site, clock: Clock): Warning | null {
   return {
     code: 'tie-gradient',
     path: `clocks.${clock.id}.tie`,
-    message: `the tie is ${height.toFixed(1)} m long and the site has no gradient; rock, shafts and buildings can change W by ½·2.2e-6 s⁻²·Δ² = ${size.toPrecision(2)} m²/s² (${((size / 8.987551787e16) * 1e18).toPrecision(2)}e-18). State the site's gradient.`,
+    message: `the tie is ${height.toFixed(1)} m long and the site has no gradient; rock, shafts and buildings can change W by ½·2.2e-6 s⁻²·Δ² = ${sizeText(size)} m²/s² (${offsetSizeText(size / SPEED_OF_LIGHT_SQUARED_M2_PER_S2)}). State the site's gradient.`,
   };
 }

@@ -1,5 +1,6 @@
 import { CampaignError, faultAt } from '../campaign/fault.js';
 import { W0_IHRS } from '../constants/defining-constants.js';
+import { sizeText } from '../quantity/size.js';
 import { ContradictionError } from '../uncertainty/exact-relations.js';
 import { type Dependent, gradientOfRow } from '../uncertainty/gradient.js';
 import { type LeastSquaresSolution, leastSquares } from '../uncertainty/least-squares.js';
@@ -81,7 +82,7 @@ function contradiction(e: ContradictionError, fitted: readonly DeterminationObse
     faultAt(
       'contradiction',
       fitted[e.row]!.path,
-      `an exact value that contradicts ${others.join(', ') || 'the others'} by ${Math.abs(e.misclosure).toPrecision(3)} m²/s²`,
+      `an exact value that contradicts ${others.join(', ') || 'the others'} by ${sizeText(Math.abs(e.misclosure), 3)} m²/s²`,
       'agreement within 1e-6 m²/s², or an uncertainty on one of them',
     ),
   ]);

@@ -3,6 +3,7 @@ import type { Warning } from '../campaign/fault.js';
 import { SPEED_OF_LIGHT_SQUARED_M2_PER_S2 } from '../constants/defining-constants.js';
 import { type TideQuantity, tideConversion } from '../earth/permanent-tide.js';
 import type { Radians } from '../quantity/radians.js';
+import { offsetSizeText, sizeText } from '../quantity/size.js';
 
 const SYSTEMS: readonly TideSystem[] = ['mean', 'zero', 'free'];
 /** Normal gravity to turn a height into a potential for a size in words; 0.3 % over the Earth. */
@@ -75,7 +76,7 @@ export class TideConverter {
       this.warnings.push({
         code: 'tide-label-missing',
         path,
-        message: `no permanent-tide label; taken as ${from}. If it is ${worst.system}, the value is off by ${(metres * 1000).toPrecision(2)} mm (${(y * 1e18).toPrecision(2)}e-18). Write "tide": "${from}" or what is right.`,
+        message: `no permanent-tide label; taken as ${from}. If it is ${worst.system}, the value is off by ${sizeText(metres * 1000)} mm (${offsetSizeText(y)}). Write "tide": "${from}" or what is right.`,
       });
     }
     return shift;
