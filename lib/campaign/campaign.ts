@@ -177,7 +177,7 @@ interface Instrument extends Remarks {
   /** share of the time in 0…1. Where `available` is stated: the share of the window that the intervals cover, without a window
    *  the share of their own span */
   readonly uptime: number;
-  /** measured intervals in order of time, those that touch or overlap joined; null where none are stated */
+  /** measured intervals as stated, in any order; null where none are stated */
   readonly available: readonly TimeInterval[] | null;
   readonly candidate: boolean;
   readonly cost: number | null;

@@ -1,3 +1,4 @@
+import { intersectionOfIntervals, totalLengthS } from '../clocks/intervals.js';
 import { LOVE_NUMBERS } from '../earth/permanent-tide.js';
 import { degToRad } from '../quantity/index.js';
 import type {
@@ -27,7 +28,6 @@ import type {
 import type { ReadOf } from './schema/descriptor.js';
 import type { determination } from './schema/determinations.js';
 import type { clock, interval, link } from './schema/instruments.js';
-import { coveredShare, inOrder } from './time-intervals.js';
 
 /** These keys of an object, where they stand. */
 function keep<T, K extends keyof T>(from: T, ...keys: K[]): Pick<T, K> {
@@ -137,10 +137,19 @@ const toStability = (s: StabilityInFile = {}): Stability => ({
   phase: s.phase ?? 0,
 });
 
+/** Share of the window that the intervals cover; without a window, of the span from their first start to their last end. */
+function coveredShare(available: readonly TimeInterval[], window: TimeInterval | null): number {
+  const whole = window ?? {
+    startMs: Math.min(...available.map((i) => i.startMs)),
+    endMs: Math.max(...available.map((i) => i.endMs)),
+  };
+  return totalLengthS(intersectionOfIntervals([available, [whole]])) / totalLengthS([whole]);
+}
+
 type InstrumentInFile = ReadOf<typeof clock> | ReadOf<typeof link>;
 
 function toInstrument(i: InstrumentInFile, window: TimeInterval | null) {
-  const available = i.available ? inOrder(i.available.map(toInterval)) : null;
+  const available = i.available?.map(toInterval) ?? null;
   return {
     ...remarksOf(i),
     ...keep(i, 'id', 'name'),

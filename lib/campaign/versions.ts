@@ -1,3 +1,4 @@
+import { closest } from '../quantity/index.js';
 import { quoted } from './json-text.js';
 import type { JsonNode } from './json-tree.js';
 import type { Context } from './read/context.js';
@@ -20,7 +21,7 @@ export function formatIsReadable(root: JsonNode, context: Context): boolean {
     return false;
   }
   const other = /^plumbtick-([a-z]+)\/\d+$/.exec(format.value)?.[1];
-  if (other !== undefined && other !== 'campaign') {
+  if (other !== undefined && closest(other, ['campaign']) === null) {
     at.refuse(format, 'wrong-format', `${quoted(CAMPAIGN_FORMAT)}: this is a ${other}, not a campaign`);
     return false;
   }

@@ -61,7 +61,8 @@ function checkPairs(
   const path = (key: string): string => context.member(key).path;
   for (const [a, b] of descriptor.exclusive)
     if (node.members.has(a) && node.members.has(b)) {
-      const second = (node.members.get(a)?.keyStart ?? 0) > (node.members.get(b)?.keyStart ?? 0) ? a : b;
+      const order = [...node.members.keys()];
+      const second = order.indexOf(a) > order.indexOf(b) ? a : b;
       const start = node.members.get(second)?.keyStart;
       reading.add('exclusive-keys', path(second), node, `${quoted(a)} and ${quoted(b)}`, 'one of them', start);
     }
@@ -119,21 +120,30 @@ export function readList<D extends Descriptor>(
 ): readonly ReadOf<D>[] | undefined {
   const { min, max } = length;
   const size = min === max ? `a list of ${min}` : min > 0 ? `a list with at least ${min}` : 'a list: [ … ]';
+  const id = item.type === 'object' ? item.keys['id'] : undefined;
+  const list: ListName | undefined = id?.descriptor.list;
+  if (list !== undefined && !(node.type === 'array' && node.items.every((child) => tellsId(child, id.required))))
+    context.reading.incomplete.add(list);
   if (node.type !== 'array') return context.refuse(node, 'wrong-type', size);
   if (node.items.length < min || node.items.length > max) return context.refuse(node, 'wrong-length', size);
   const items: ReadOf<D>[] = [];
-  const ids = new Set<string>();
-  const list: ListName | undefined = item.type === 'object' ? item.keys['id']?.descriptor.list : undefined;
+  const names = new Set<string>();
   for (const [i, child] of node.items.entries()) {
-    const id = pathBy === 'id' ? idOf(child) : null;
+    const name = pathBy === 'id' ? idOf(child) : null;
     // of two items with one id the second is named by its position, so that a path means one place
-    const step = id === null || ids.has(id) ? i : id;
-    if (id !== null) ids.add(id);
-    const owner = id !== null && list !== undefined ? { list, id } : context.owner;
+    const step = name === null || names.has(name) ? i : name;
+    if (name !== null) names.add(name);
+    const owner = step === name && list !== undefined ? { list, id: name } : context.owner;
     const read = context.read(item, child, context.item(step, owner));
     if (read !== undefined) items.push(read as ReadOf<D>);
   }
   return items;
+}
+
+/** Whether the id of an item, if it has or needs one, can be told. */
+function tellsId(node: JsonNode, needed: boolean): boolean {
+  const id = node.type === 'object' ? node.members.get('id') : undefined;
+  return id === undefined ? node.type === 'object' && !needed : id.value.type === 'string';
 }
 
 function idOf(node: JsonNode): string | null {

@@ -29,13 +29,15 @@ export function readQuantity(descriptor: QuantityDescriptor, node: JsonNode, con
   return { ...value, parts: withRemarks(value.parts, descriptor, node), tide: null, ...extras };
 }
 
+const VALUE_AND_UNIT: ReadonlySet<string> = new Set(['value', 'unit']);
+
 /** A number with a unit and without uncertainty. */
 export function readScalar(descriptor: ScalarDescriptor, node: JsonNode, context: Context): number | undefined {
   let value: number;
   if (node.type === 'object' && !descriptor.bare) {
     const own = ownMembers(node, context.key, scalarKeys(descriptor), {}, context);
     const whole = own.size === node.members.size && readRemarkKeys(own, context);
-    const read = readMeasured(plain(node, READ_TOGETHER), descriptor.kind);
+    const read = readMeasured(plain(node, VALUE_AND_UNIT), descriptor.kind);
     if (!read.ok) return refuseAll(read.problems, node, context);
     if (read.value.u > 0) return context.refuse(node, 'uncertainty-not-expected', 'a number without an uncertainty');
     if (!whole) return undefined;

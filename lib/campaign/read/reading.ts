@@ -41,6 +41,8 @@ interface PlacedFault {
 export class Reading {
   readonly definitions = new Map<ListName, Map<string, Definition>>();
   readonly uses: Use[] = [];
+  /** lists with items whose id could not be read: that a name is missing there says nothing */
+  readonly incomplete = new Set<ListName>();
   private readonly origins = new Map<object, Origin>();
   private readonly placed: PlacedFault[] = [];
   private places: TextPlaces | null = null;

@@ -20,6 +20,7 @@ export function checkReferences(reading: Reading): void {
     const { list, id, node, builtIn, context } = use;
     const known = reading.definitions.get(list);
     if (!known?.has(id) && !builtIn.includes(id)) {
+      if (reading.incomplete.has(list)) continue;
       const candidates = [...(known?.keys() ?? []), ...builtIn];
       const expected =
         candidates.length === 0

@@ -179,7 +179,7 @@ export const campaignSchema = object('campaign', 'A comparison of heights by clo
     'Love numbers',
     'Default: h₂ = 0.6078, k₂ = 0.30190.',
   ),
-  sources: optional(list(source, { pathBy: 'id' }), 'Sources', 'Shared error sources.'),
+  sources: optional(list(source), 'Sources', 'Shared error sources.'),
   datums: optional(list(datum, { pathBy: 'id' }), 'Datums', 'Zero levels besides the built-in ones.'),
   transitions: optional(list(transition, { pathBy: 'id' }), 'Transitions', 'Measured ratios, and further transitions.'),
   sites: required(list(site, { pathBy: 'id' }), 'Sites', 'Markers whose potential is wanted.'),

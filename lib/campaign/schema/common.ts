@@ -1,4 +1,15 @@
-import { number, object, optional, type Range, required, scalar, text } from './descriptor.js';
+import {
+  boolean,
+  number,
+  object,
+  oneOf,
+  optional,
+  type Range,
+  reference,
+  required,
+  scalar,
+  text,
+} from './descriptor.js';
 
 /** Limits that no value of a real campaign comes near; what lies beyond is a slip of unit or key. */
 export const GRAVITY: Range = { min: 9, max: 10.5, because: 'gravity near the Earth’s surface, in m/s²' };
@@ -19,11 +30,7 @@ export const SMALL_DEVIATION: Range = {
 export const name = optional(text(), 'Name', 'What people call it; shown beside the id.');
 
 export const candidate = {
-  candidate: optional(
-    { type: 'boolean' },
-    'Candidate',
-    'Not there yet: design ranks what it would bring. Default: false.',
-  ),
+  candidate: optional(boolean(), 'Candidate', 'Not there yet: design ranks what it would bring. Default: false.'),
   cost: optional(
     scalar('fraction', { min: 0 }),
     'Cost',
@@ -31,14 +38,10 @@ export const candidate = {
   ),
 } as const;
 
-export const use = optional(
-  { type: 'enum', values: ['check'] as const },
-  'Use',
-  '"check": compared with the result, not fitted.',
-);
+export const use = optional(oneOf('check'), 'Use', '"check": compared with the result, not fitted.');
 
 export const datumReference = optional(
-  { type: 'reference', list: 'datums', builtIn: ['ihrs', 'u0-grs80', 'tt'] },
+  reference('datums', ['ihrs', 'u0-grs80', 'tt']),
   'Datum',
   'Datum of the height or geopotential number: one from datums, or ihrs (62 636 853.4 m²/s², the default), u0-grs80 ' +
     '(62 636 860.850, for ζ or N from a model without the zero-degree term), tt (L_G·c²).',
@@ -48,7 +51,7 @@ export const datumReference = optional(
 export const systematicPiece = object('systematic', 'One piece of a systematic relative frequency uncertainty.', {
   u: required(scalar('fraction', SMALL_DEVIATION), 'u', 'Standard uncertainty, relative frequency.'),
   source: optional(
-    { type: 'reference', list: 'sources', builtIn: [] },
+    reference('sources'),
     'Source',
     'Shared error source: the same source elsewhere is the same error. Without it the piece is independent.',
   ),
