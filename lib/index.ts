@@ -1,9 +1,11 @@
 /** The public door of Plumbtick's library. */
 export { type FloorsAnswer, type FloorsInput, floors } from './answers/floors.js';
+export { type PairAnswer, type PairInput, pair } from './answers/pair.js';
 export { predict } from './answers/predict.js';
 export type * from './answers/prediction.js';
 export type * from './campaign/campaign.js';
 export { CampaignError, type Fault, type Warning } from './campaign/fault.js';
 export { type ReadCampaign, readCampaign, readCampaignValue } from './campaign/read.js';
+export { campaignJsonSchema, type JsonSchema } from './campaign/schema/index.js';
 export { version } from './constants/version.js';
 export * from './report/index.js';

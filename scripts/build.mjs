@@ -1,5 +1,6 @@
 // Builds dist/: the library and the elements as ES modules, one classic script for a <script> tag, the command line,
-// the JSON Schema of the campaign file and one HTML page that works from disk. `--types` also writes the declarations.
+// the JSON Schema of the campaign file and one HTML page that works from disk. `--types` also writes the declarations;
+// `--cli FILE` builds the command line alone.
 // Files are written beside and renamed, so that a page or a test never reads half of one.
 import { execFileSync } from 'node:child_process';
 import crypto from 'node:crypto';
@@ -25,6 +26,22 @@ const common = {
   define: { __PLUMBTICK_VERSION__: JSON.stringify(version) },
   plugins: [inlineWorker],
   outdir: 'dist',
+};
+
+/** The command line in one file, that of its packages included. */
+const commandLine = {
+  ...common,
+  entryPoints: { cli: 'lib/cli/index.ts' },
+  format: 'esm',
+  platform: 'node',
+  target: 'node20',
+  minifySyntax: true,
+  legalComments: 'inline',
+  external: ['geotiff'], // loaded from node_modules when a grid asks for it
+  banner: {
+    // bundled CommonJS packages may call require
+    js: '#!/usr/bin/env node\nimport { createRequire as __createRequire } from "node:module"; const require = __createRequire(import.meta.url);',
+  },
 };
 
 /** Text of the self-contained page: the script inline, under a policy that allows this script alone and no request at all. */
@@ -72,20 +89,7 @@ export async function build({ types = false } = {}) {
       legalComments: 'eof',
       external: ['geotiff'], // a hundred kilobytes that only the command line needs
     }),
-    esbuild.build({
-      ...common,
-      entryPoints: { cli: 'lib/cli/index.ts' },
-      format: 'esm',
-      platform: 'node',
-      target: 'node20',
-      minifySyntax: true,
-      legalComments: 'inline',
-      external: ['geotiff'], // loaded from node_modules when a grid asks for it
-      banner: {
-        // bundled CommonJS packages may call require
-        js: '#!/usr/bin/env node\nimport { createRequire as __createRequire } from "node:module"; const require = __createRequire(import.meta.url);',
-      },
-    }),
+    esbuild.build(commandLine),
   ]);
   const written = new Set();
   const put = (file, contents, mode) => {
@@ -100,10 +104,7 @@ export async function build({ types = false } = {}) {
     } else put(file, text, name === 'cli.js' ? 0o755 : 0o644);
   }
   const { campaignJsonSchema } = await import(`${pathToFileURL(path.join(dist, 'index.js'))}?${Date.now()}`);
-  if (campaignJsonSchema !== undefined) {
-    const schema = typeof campaignJsonSchema === 'function' ? campaignJsonSchema() : campaignJsonSchema;
-    put(path.join(dist, 'plumbtick-campaign.schema.json'), `${JSON.stringify(schema, null, 2)}\n`);
-  }
+  put(path.join(dist, 'plumbtick-campaign.schema.json'), `${JSON.stringify(campaignJsonSchema(), null, 2)}\n`);
 
   const declarations = path.join(dist, 'types');
   for (const file of files(dist))
@@ -119,9 +120,20 @@ export async function build({ types = false } = {}) {
   return [...written].sort();
 }
 
+/** Only the command line, to a file of its own: for its tests, which then need no build before. */
+async function buildCommandLine(file) {
+  const { outputFiles } = await esbuild.build(commandLine);
+  write(path.resolve(file), outputFiles[0].text, 0o755);
+}
+
 if (process.argv[1] && pathToFileURL(process.argv[1]).href === import.meta.url) {
   try {
     const started = performance.now();
+    const only = process.argv.indexOf('--cli');
+    if (only > 0) {
+      await buildCommandLine(process.argv[only + 1]);
+      process.exit(0);
+    }
     const written = await build({ types: process.argv.includes('--types') });
     for (const file of written.filter((name) => !name.endsWith('.map')))
       console.log(`${path.relative(root, file).padEnd(44)} ${String(fs.statSync(file).size).padStart(8)} B`);

@@ -18,15 +18,17 @@ const out = (text: string) => process.stdout.write(text);
 const err = (text: string) => process.stderr.write(text);
 
 /** JSON turns NaN and infinity into null without a word, and null means something else here. */
+function refuseNonFinite(value: unknown, at: string): void {
+  if (typeof value === 'number') {
+    if (!Number.isFinite(value)) throw new RangeError(`${at} is ${value}`);
+  } else if (Array.isArray(value)) for (const item of value) refuseNonFinite(item, at);
+  else if (typeof value === 'object' && value !== null)
+    for (const [key, item] of Object.entries(value)) refuseNonFinite(item, key);
+}
+
 function jsonText(value: unknown): string {
-  return `${JSON.stringify(
-    value,
-    (key, item) => {
-      if (typeof item === 'number' && !Number.isFinite(item)) throw new RangeError(`${key || 'a result'} is ${item}`);
-      return item;
-    },
-    1,
-  )}\n`;
+  refuseNonFinite(value, 'a result');
+  return `${JSON.stringify(value, null, 1)}\n`;
 }
 
 /** The command line: words in, exit status out. Nothing it meets ends in a stack trace. */

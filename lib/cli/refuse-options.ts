@@ -17,6 +17,6 @@ export function refuseOptions(
     return [`${option}${shown}`, ...mark, `    ${code}; expected ${printable(expected)}`].join('\n');
   });
   throw new UsageError(
-    `${command}: ${faults.length === 1 ? 'an option' : `${faults.length} options`} can't be read\n${lines.join('\n')}`,
+    `${command}: ${faults.length === 1 ? 'one option is' : `${faults.length} options are`} missing or can't be used\n${lines.join('\n')}`,
   );
 }

@@ -1,17 +1,7 @@
-import type { Estimate, FloorsAnswer, FloorsBudgetRow, FloorsHint } from '../answers/floors.js';
+import type { Estimate, FloorsAnswer, FloorsHint } from '../answers/floors.js';
 import { formatConcise, formatLength } from '../quantity/index.js';
-import { inputUnit } from './input-unit.js';
-import {
-  decimalCell,
-  estimateCell,
-  HERTZ,
-  METRES,
-  OFFSET,
-  POTENTIAL,
-  sizeCell,
-  sizeText,
-  statedCell,
-} from './numbers.js';
+import { BUDGET_TITLE, budgetCells, budgetColumns } from './budget-table.js';
+import { decimalCell, estimateCell, HERTZ, METRES, OFFSET, POTENTIAL, sizeText } from './numbers.js';
 import { estimateColumn, numberColumn, type Report, type Table, textCell, textColumn } from './table.js';
 
 const HINTS: Readonly<Record<FloorsHint, string>> = {
@@ -116,22 +106,8 @@ const frequencyTable = ({ offsetHz }: FloorsAnswer): Table => ({
 
 const budgetTable = ({ budget }: FloorsAnswer): Table => ({
   id: 'budget',
-  title: 'Budget: what each input contributes to u(y)',
-  columns: [
-    textColumn('input'),
-    estimateColumn('stated', null),
-    textColumn('unit'),
-    numberColumn('c', '1e-18 per unit'),
-    numberColumn('u(y)', OFFSET.unit),
-    numberColumn('share', '%'),
-  ],
-  rows: budget.map(({ input, value, u, sensitivity, uy, share }: FloorsBudgetRow) => [
-    textCell(input),
-    statedCell({ value, u }),
-    textCell(inputUnit(input)),
-    sizeCell(sensitivity * 1e18, 3),
-    sizeCell(uy * 1e18),
-    decimalCell(100 * share, 1),
-  ]),
+  title: BUDGET_TITLE,
+  columns: budgetColumns,
+  rows: budget.map(budgetCells),
   notes: [],
 });

@@ -13,6 +13,7 @@ export {
   sizeCell,
   statedCell,
 } from './numbers.js';
+export { pairReport } from './pair-report.js';
 export { type PredictionReportOptions, predictionReport } from './prediction-report.js';
 export {
   type Cell,

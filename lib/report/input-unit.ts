@@ -2,6 +2,7 @@ const units: Readonly<Record<string, string>> = {
   h: 'm',
   zeta: 'm',
   N: 'm',
+  n: 'm',
   H: 'm',
   dH: 'm',
   height: 'm',
@@ -15,5 +16,5 @@ const units: Readonly<Record<string, string>> = {
   meanGravityFactor: 's⁻²',
 };
 
-/** SI unit of an input by the key that ends its path; 1 for what has none. */
-export const inputUnit = (path: string): string => units[path.slice(path.lastIndexOf('.') + 1)] ?? '1';
+/** SI unit of an input by the key that ends its path (`sites.cellar.h`) or its option's name (`a-h`); 1 for what has none. */
+export const inputUnit = (path: string): string => units[/[^.-]*$/.exec(path)?.[0] ?? ''] ?? '1';

@@ -1,21 +1,11 @@
 import type { BudgetRow, LinkPrediction, Prediction } from '../answers/prediction.js';
 import type { Campaign, Site } from '../campaign/campaign.js';
 import { formatLength } from '../quantity/index.js';
+import { BUDGET_TITLE, budgetCells, budgetColumns, restCells, SHARE_NOTE } from './budget-table.js';
 import { LENGTH_NOTE, referencePotentialNote, SIGN_NOTE, tideNote } from './conventions.js';
-import { inputUnit } from './input-unit.js';
+import { limitSentence } from './limit.js';
+import { decimalCell, estimateCell, HERTZ, METRES, OFFSET, POTENTIAL, sizeText } from './numbers.js';
 import {
-  decimalCell,
-  estimateCell,
-  HERTZ,
-  METRES,
-  OFFSET,
-  POTENTIAL,
-  sizeCell,
-  sizeText,
-  statedCell,
-} from './numbers.js';
-import {
-  type Cell,
   estimateColumn,
   none,
   notComputed,
@@ -37,8 +27,6 @@ export interface PredictionReportOptions {
   readonly links: readonly string[];
 }
 
-/** y in units of 1e-18 */
-const PER_OFFSET_UNIT = 1e18;
 /** More links than this get one line each about what limits them; a budget then has to be asked for. */
 const MAX_BUDGETS = 6;
 /** Rows of a smaller share are summed into one line. */
@@ -74,28 +62,15 @@ function sentences({ links, combination }: Prediction): string[] {
   if (predicted.length > 0) {
     const worst = predicted.reduce((a, b) => (b.y!.u > a.y!.u ? b : a));
     const which = predicted.length === 1 ? `Link ${worst.id}` : `The least certain link, ${worst.id},`;
-    found.push(`${which} is predicted to ${formatLength(worst.dH!.u, 2)}, ${sizeText(worst.y!.u)}. ${limitOf(worst)}`);
+    found.push(
+      `${which} is predicted to ${formatLength(worst.dH!.u, 2)}, ${sizeText(worst.y!.u)}. ${limitSentence(worst.budget)}`,
+    );
   }
   if (combination !== null)
     found.push(
       `Redundant determinations: χ² = ${sizeText(combination.chi2, 3)} on ${combination.dof} ${combination.dof === 1 ? 'degree' : 'degrees'} of freedom, p = ${sizeText(combination.p)}.`,
     );
   return found;
-}
-
-function limitOf({ budget }: LinkPrediction): string {
-  const [first] = budget;
-  if (first === undefined) return '';
-  const { share, input } = first;
-  const part =
-    share > 0.95
-      ? 'Nearly all'
-      : share > 0.55
-        ? 'More than half'
-        : share > 0.45
-          ? 'About half'
-          : `The largest part, ${sizeText(100 * share)}\u00a0%,`;
-  return `${part} of the variance is ${input}.`;
 }
 
 function linksTable({ links }: Prediction): Table {
@@ -137,48 +112,21 @@ function budgetTable({ links }: Prediction, { full, links: chosen }: PredictionR
         : budget.filter((row, i) => i === 0 || Math.abs(row.share) >= SMALL_SHARE);
   return {
     id: 'budget',
-    title: 'Budget: what each input contributes to u(y)',
-    columns: [
-      textColumn('link'),
-      textColumn('input'),
-      estimateColumn('stated', null),
-      textColumn('unit'),
-      numberColumn('c', '1e-18 per unit'),
-      numberColumn('u(y)', OFFSET.unit),
-      numberColumn('share', '%'),
-    ],
+    title: BUDGET_TITLE,
+    columns: [textColumn('link'), ...budgetColumns],
     rows: wanted.flatMap((link) => {
       const shown = rowsOf(link);
       const rest = link.budget.slice(shown.length);
-      const rows = shown.map((row, i) => budgetRow(whole || i === 0 ? link.id : '', row));
-      return rest.length === 0 ? rows : [...rows, restRow(rest)];
+      const id = (i: number) => textCell(whole || i === 0 ? link.id : '');
+      const rows = shown.map((row, i) => [id(i), ...budgetCells(row)]);
+      return rest.length === 0 ? rows : [...rows, [textCell(''), ...restCells(rest)]];
     }),
     notes: [
-      'share is the part of the variance u²(y), correlations included: shares add up to 100 %, and one can be negative. c = ∂y/∂input.',
+      SHARE_NOTE,
       ...(!whole && links.length > MAX_BUDGETS ? ['Largest input of each link; --link ID prints a whole budget.'] : []),
     ],
   };
 }
-
-const budgetRow = (link: string, { input, value, u, sensitivity, uy, share }: BudgetRow): Cell[] => [
-  textCell(link),
-  textCell(input),
-  statedCell({ value, u }),
-  textCell(inputUnit(input)),
-  sizeCell(sensitivity * PER_OFFSET_UNIT, 3),
-  sizeCell(uy * PER_OFFSET_UNIT),
-  decimalCell(100 * share, 1),
-];
-
-const restRow = (rest: readonly BudgetRow[]): Cell[] => [
-  textCell(''),
-  textCell(rest.length === 1 ? `${rest[0]!.input}` : `${rest.length} more inputs together`),
-  textCell(''),
-  textCell(''),
-  textCell(''),
-  textCell(''),
-  decimalCell(100 * rest.reduce((sum, { share }) => sum + share, 0), 1),
-];
 
 function sitesTable({ sites }: Prediction, campaign: Campaign): Table {
   return {

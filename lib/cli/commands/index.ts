@@ -2,7 +2,8 @@ import type { Command } from '../command.js';
 import { check } from './check.js';
 import { floors } from './floors.js';
 import { newCampaign } from './new.js';
+import { pair } from './pair.js';
 import { predict } from './predict.js';
 
 /** Every command, in the order of the help. */
-export const commands: readonly Command[] = [floors, newCampaign, check, predict];
+export const commands: readonly Command[] = [floors, pair, newCampaign, check, predict];
