@@ -7,6 +7,7 @@ describe('closest', () => {
   it.each([
     ['gradeint', 'gradient'], // two neighbours swapped: one edit
     ['detrminatons', 'determinations'], // two left out
+    ['detreminaitons', 'determinations'], // two swaps, which would be four substitutions
     ['Zeta', 'zeta'],
     ['GRADIENT', 'gradient'],
     ['w0', 'W0'],

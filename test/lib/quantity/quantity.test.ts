@@ -83,6 +83,8 @@ describe('forms of one measured number', () => {
   it('takes a power behind the u alone as it stands, as programs print small ones', () => {
     expect(read('143.216 ± 8e-05 m')).toEqual([143.216, 8e-5]);
     expect(read('0 ± 1e-30', 'fraction')).toEqual([0, 1e-30]);
+    // as small as a u can be beside a double that still feels it
+    expect(read('62636853.4 ± 1e-8', 'potential')).toEqual([62636853.4, 1e-8]);
   });
 
   it('keeps apart no uncertainty and an uncertainty of zero', () => {
@@ -210,6 +212,10 @@ describe('refusals', () => {
   it('offers only corrections that can be read', () => {
     // The comma could be mended, the unit not.
     expect(refusal(() => parseQuantity('12,348(3) mGal', 'length')).expected).not.toContain('write');
+  });
+
+  it('guesses no number where the groups could mean anything', () => {
+    expect(refusal(() => parseQuantity('5 3 m', 'length')).expected).not.toContain('write');
   });
 
   it('refuses a long text before reading it', () => {

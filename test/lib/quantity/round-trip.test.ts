@@ -89,7 +89,7 @@ describe('parse(print(q)) = q', () => {
         // Printing what was read gives the same text again.
         expect(print(q.value, q.u, o)).toBe(text);
       }),
-      { numRuns: 1500 },
+      { numRuns: 500 },
     );
   });
 
@@ -102,7 +102,7 @@ describe('parse(print(q)) = q', () => {
           expect(q.decimal.u).toBeNull();
         }
       }),
-      { numRuns: 1500 },
+      { numRuns: 500 },
     );
   });
 
