@@ -1,3 +1,5 @@
+import type { OceanLoadingConstituent } from '../earth/earth-tide/ocean-loading.js';
+import type { PolePosition } from '../earth/earth-tide/pole-tide.js';
 import type { Radians } from '../quantity/radians.js';
 
 /** Permanent-tide system (Mäkinen 2021; IERS Conventions 2010, section 1.1). */
@@ -150,6 +152,8 @@ export interface Site extends Remarks {
   readonly gradient: Measured | null;
   /** loading, groundwater, air: added to W of the site's clocks, m²/s² */
   readonly variable: Measured | null;
+  /** load of the ocean tide as felt at the site, by constituent; an empty list states that there is none */
+  readonly oceanLoading?: readonly OceanLoadingConstituent[];
   readonly determinations: readonly Determination[];
   readonly candidate: boolean;
   readonly cost: number | null;

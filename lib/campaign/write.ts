@@ -1,4 +1,4 @@
-import { formatInstant, type QuantityKind, readMeasured } from '../quantity/index.js';
+import { formatInstant, KINDS, type QuantityKind, readMeasured } from '../quantity/index.js';
 import type { Campaign, Measured } from './campaign.js';
 import { fromCampaign } from './from-campaign.js';
 import { campaignSchema } from './schema/campaign-schema.js';
@@ -48,15 +48,14 @@ const objectOf = ({ keys }: ObjectDescriptor<Keys>, read: object): { readonly [k
 
 function quantityOf(kind: QuantityKind, m: Measured): Json {
   const alone = m.text === null ? null : readMeasured(m.text, kind);
-  // a text that had its unit or its uncertainty beside it says something else when it stands alone
-  const keepsText =
-    alone?.ok === true && alone.value.value === m.value && (alone.value.u === m.u || alone.value.u === 0);
+  // a text that stood beside a unit of its own may say something else when it stands alone
+  const keepsText = alone?.ok === true && alone.value.value === m.value;
   const value = keepsText ? (m.text as string) : m.value;
   const [first, second] = m.parts;
   const uncertainty = second
     ? { parts: m.parts.map((part) => withoutNull(part)) }
     : {
-        ...(m.u > 0 && !(keepsText && alone.value.u === m.u) ? { u: m.u } : {}),
+        ...(m.u > 0 && !(keepsText && alone.value.u === m.u) ? { u: keepsText ? withUnit(m.u, kind) : m.u } : {}),
         ...(first?.source != null ? { source: first.source } : {}),
       };
   const rest: Record<string, Json> = {
@@ -73,6 +72,10 @@ function quantityOf(kind: QuantityKind, m: Measured): Json {
   };
   return Object.keys(rest).length === 0 ? value : { value, ...rest };
 }
+
+/** A bare number beside a text with a unit could be meant in either unit. */
+const withUnit = (value: number, kind: QuantityKind): Json =>
+  KINDS[kind].unit === '1' ? value : `${value} ${KINDS[kind].unit}`;
 
 const withoutNull = (part: object): { readonly [key: string]: Json } =>
   Object.fromEntries(Object.entries(part).filter(([, v]) => v !== null));

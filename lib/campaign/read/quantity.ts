@@ -1,4 +1,10 @@
-import { type QuantityProblem, readExact, readMeasured, readStandardUncertainty } from '../../quantity/index.js';
+import {
+  type MeasuredNumbers,
+  type QuantityProblem,
+  readExact,
+  readMeasured,
+  readStandardUncertainty,
+} from '../../quantity/index.js';
 import type { Measured, UncertaintyPart } from '../campaign.js';
 import type { JsonNode, JsonObject } from '../json-tree.js';
 import {
@@ -26,7 +32,17 @@ export function readQuantity(descriptor: QuantityDescriptor, node: JsonNode, con
   if (!read.ok) return refuseAll(read.problems, node, context);
   const { value } = read;
   if (!inRange(value.value, descriptor, node, context)) return undefined;
-  return { ...value, parts: withRemarks(value.parts, descriptor, node), tide: null, ...extras };
+  const text = textWithUnit(value, descriptor, node);
+  return { ...value, text, parts: withRemarks(value.parts, descriptor, node), tide: null, ...extras };
+}
+
+/** The value as typed, with the unit that stood beside it: "43.812" alone would be shown as metres. */
+function textWithUnit({ text, value }: MeasuredNumbers, { kind }: QuantityDescriptor, node: JsonNode): string | null {
+  const unit = node.type === 'object' ? node.members.get('unit')?.value : undefined;
+  if (text === null || unit?.type !== 'string') return text;
+  const whole = `${text} ${unit.value}`;
+  const read = readMeasured(whole, kind);
+  return read.ok && read.value.value === value ? whole : text;
 }
 
 const VALUE_AND_UNIT: ReadonlySet<string> = new Set(['value', 'unit']);

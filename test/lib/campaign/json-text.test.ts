@@ -4,6 +4,8 @@ import { parseJsonText, placeInString, quoted } from '../../../lib/campaign/json
 import { type JsonNode, JsonTextError, jsonTreeOf } from '../../../lib/campaign/json-tree.js';
 import { TextPlaces } from '../../../lib/campaign/text-place.js';
 
+import { cpuSeconds } from './cpu-seconds.js';
+
 /** The plain value of a tree, for comparison with JSON.parse; defineProperty because a key may be `__proto__`. */
 function plain(node: JsonNode): unknown {
   if (node.type === 'object') {
@@ -190,14 +192,13 @@ describe('parseJsonText', () => {
     expect(({} as Record<string, unknown>)['polluted']).toBeUndefined();
   });
 
-  it('reads 10 MB in well under a second', () => {
+  it('reads 10 MB in well under a second: not many times slower than JSON.parse, which keeps no places', () => {
     const records = `{"id": "cellar", "lat": 52.2961, "list": [1, 2, 3], "h": "143.216(8) m"},`.repeat(140_000);
     const text = `[${records.slice(0, -1)}]`;
     expect(text.length).toBeGreaterThan(10_000_000);
-    const before = performance.now();
-    parseJsonText(text);
-    // generous: the machine may be shared; a quadratic parser takes minutes
-    expect(performance.now() - before).toBeLessThan(3000);
+    // measured against the engine's own parser, so that a busy machine slows both; about 6 here
+    const native = cpuSeconds(() => JSON.parse(text));
+    expect(cpuSeconds(() => parseJsonText(text))).toBeLessThan(40 * native);
   });
 });
 
@@ -205,7 +206,9 @@ describe('jsonTreeOf', () => {
   it('reads values in memory like their text', () => {
     fc.assert(
       fc.property(fc.jsonValue({ maxDepth: 5 }), (value) => {
-        expect(plain(jsonTreeOf(value))).toEqual(plain(parseJsonText(JSON.stringify(value))));
+        // JSON.stringify takes the sign off -0
+        const text = JSON.stringify(value);
+        expect(plain(jsonTreeOf(JSON.parse(text)))).toEqual(plain(parseJsonText(text)));
       }),
     );
   });
