@@ -230,6 +230,8 @@ export interface Campaign extends Remarks {
   /** discrepancy to be revealed, as length equivalent, m; null: 10 × target */
   readonly effectM: number | null;
   readonly love: Remarks & { readonly h2: number; readonly k2: number };
+  /** coordinates of the pole in order of time, or one position for all times */
+  readonly pole?: readonly PolePosition[];
   readonly sources: readonly Source[];
   readonly datums: readonly Datum[];
   readonly transitions: readonly Transition[];
