@@ -3,6 +3,7 @@ import { GRS80 } from '../earth/level-ellipsoid.js';
 import { geopotentialOfNormalHeight } from '../earth/normal-field.js';
 import type { Radians } from '../quantity/radians.js';
 import type { ModelFunction } from './model-function.js';
+import { geopotentialDifference } from './trial-differences.js';
 
 /** Each function here is one way to know a potential, W or a difference of W, from inputs as stated. A `shift` is what the
  *  permanent-tide and frame conversions add to the stated number; heights are converted first, then turned into potential. */
@@ -40,6 +41,12 @@ export function normalHeightFunction(
     partials: (x) => {
       const { perHeightMs2 } = geopotentialOfNormalHeight(GRS80, latitudeRad, H(x));
       return lower === null ? [1, -perHeightMs2] : [1, -perHeightMs2, perHeightMs2];
+    },
+    differences: (x) => {
+      const geopotential = geopotentialDifference(latitudeRad, H(x));
+      return ([dW0, dUpper, dLower], count, out) => {
+        for (let t = 0; t < count; t++) out[t] = dW0![t]! - geopotential(dUpper![t]! - (dLower?.[t] ?? 0));
+      };
     },
   };
 }

@@ -8,7 +8,12 @@ export interface ModelFunction {
   evaluate(x: ArrayLike<number>): number;
   /** ∂/∂x_k at these arguments, in the order of `inputs` */
   partials(x: ArrayLike<number>): number[];
+  /** For a function that is slow to evaluate: f(x̂ + d) − f(x̂) for many deviations d at once. See trial-differences.ts */
+  differences?(estimates: ArrayLike<number>): TrialDifferences;
 }
+
+/** Writes f(x̂ + d) − f(x̂) into out[t] for trials t < count; d in the order of the function's inputs. */
+export type TrialDifferences = (d: readonly Float64Array[], count: number, out: Float64Array) => void;
 
 /** Value and gradient at the inputs' estimates. */
 export function atEstimates(

@@ -48,6 +48,8 @@ export interface MonteCarloOptions {
 /** One output quantity by the trials. */
 export interface MonteCarloOutput {
   readonly name: string;
+  /** y = f(x̂), as given */
+  readonly estimate: number;
   /** mean of the trials; null where it doesn't exist (a t with ν ≤ 1 enters) */
   readonly mean: number | null;
   /** standard deviation of the trials; null where it is infinite (a t with ν ≤ 2 enters) */
@@ -216,6 +218,7 @@ function outputOf(
   });
   return {
     name,
+    estimate: linear.value,
     mean: moments.mean ? linear.value + trials.mean : null,
     u: moments.variance ? Math.sqrt(trials.variance) : null,
     meanDeviation: moments.mean ? trials.mean : null,

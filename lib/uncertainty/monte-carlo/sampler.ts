@@ -6,6 +6,7 @@ import { CopulaCorrelations } from './copula-correlation.js';
 import { type Deviates, deviatesOf, normalScores } from './deviates.js';
 import { pivotedCholesky } from './pivoted-cholesky.js';
 import { type Shape, shapeOf, type TrialCorrelation, type TrialInput } from './trial-input.js';
+import { weightedSum } from './weighted-sum.js';
 
 /** Trials drawn at a time: the arrays of some sixty inputs stay in a processor's cache. */
 export const BLOCK = 1000;
@@ -79,7 +80,7 @@ export class Sampler {
       });
       inputs.forEach((input, i) => {
         const out = this.deviations[input]!;
-        combine(rows[i]!, this.#scores, out, count);
+        weightedSum(rows[i]!, this.#scores, count, out);
         deviates[i]!.fromScores(out, count);
       });
     }
@@ -175,22 +176,4 @@ function scoreFactor(
     ]);
   }
   return { rows: factor.rows, rank: factor.rank };
-}
-
-/** out = Σ row_k·scores_k. Four at a time: the loop is bound by reading and writing `out`. */
-function combine(row: Float64Array, scores: readonly Float64Array[], out: Float64Array, count: number): void {
-  out.fill(0, 0, count);
-  const used: number[] = [];
-  for (let k = 0; k < row.length; k++) if (row[k] !== 0) used.push(k);
-  let n = 0;
-  for (; n + 3 < used.length; n += 4) {
-    const [a, b, c, d] = [row[used[n]!]!, row[used[n + 1]!]!, row[used[n + 2]!]!, row[used[n + 3]!]!];
-    const [s, t, u, v] = [scores[used[n]!]!, scores[used[n + 1]!]!, scores[used[n + 2]!]!, scores[used[n + 3]!]!];
-    for (let i = 0; i < count; i++) out[i]! += a * s[i]! + b * t[i]! + c * u[i]! + d * v[i]!;
-  }
-  for (; n < used.length; n++) {
-    const a = row[used[n]!]!;
-    const s = scores[used[n]!]!;
-    for (let i = 0; i < count; i++) out[i]! += a * s[i]!;
-  }
 }
