@@ -130,6 +130,10 @@ export class PlumbPair extends ArticleElement<PairAnswer> {
     return words.citation(answer, this.text('correlation'));
   }
 
+  protected override reveal(): void {
+    this.open = true;
+  }
+
   // --- values put in
 
   #siteRow(quantity: string, spoken: string, label: TemplateResult | string, placeholder: string): TemplateResult {

@@ -141,19 +141,24 @@ export abstract class ArticleElement<Answer> extends PlumbElement {
     this.requestUpdate();
   }
 
-  #focus(name: string): void {
+  /** Makes the field of a value visible, where the form can be folded away. */
+  protected reveal(): void {}
+
+  async #focus(name: string): Promise<void> {
+    this.reveal();
+    await this.updateComplete;
     this.renderRoot.querySelector<HTMLElement>(`#f-${name}`)?.focus();
   }
 
   #set(name: string, text: string): void {
     this.#type(name, text, true);
-    void this.updateComplete.then(() => this.#focus(name));
+    void this.#focus(name);
   }
 
   #showExample(): void {
     for (const [name, text] of Object.entries(this.example)) this.#edits.set(name, text);
     this.requestUpdate();
-    void this.updateComplete.then(() => this.#focus(this.names[0]!));
+    void this.#focus(this.names[0]!);
   }
 
   async #copy(text: string): Promise<void> {
@@ -276,7 +281,7 @@ export abstract class ArticleElement<Answer> extends PlumbElement {
         <p class="s1">${richText(this.sentence(answer))}</p>
         <p class="tagc">before the last edit, which cannot be read</p>
         <p>
-          <button type="button" class="btn" @click=${() => this.#focus(faults[0]!.path)}>Go to the field</button>
+          <button type="button" class="btn" @click=${() => void this.#focus(faults[0]!.path)}>Go to the field</button>
         </p>
       </div>
       ${this.figures(answer)}`;

@@ -1,5 +1,6 @@
-import { expect, fixture, html, oneEvent } from '@open-wc/testing';
+import { aTimeout, expect, fixture, html, oneEvent } from '@open-wc/testing';
 import { emulateMedia, sendKeys, setViewport } from '@web/test-runner-commands';
+import { define } from '../../components/define.js';
 import { PlumbFloors } from '../../components/floors/plumb-floors.js';
 import '../../components/floors/plumb-floors.define.js';
 import { version } from '../../lib/constants/version.js';
@@ -98,8 +99,9 @@ describe('plumb-floors', () => {
     button(element, 'Undo').click();
     await element.updateComplete;
     expect(words(element, '.s1')).to.contain(Y);
-    expect(element.shadowRoot!.querySelector('#n-dh')).to.equal(null);
-    expect(element.shadowRoot!.activeElement).to.equal(field(element, 'dh'));
+    expect(element.shadowRoot!.querySelectorAll('#n-dh').length).to.equal(0);
+    await aTimeout(20);
+    expect(element.shadowRoot!.activeElement?.id).to.equal('f-dh');
   });
 
   it('keeps the last good answer as stale while a typed value cannot be read, and writes it right on request', async () => {
@@ -107,7 +109,7 @@ describe('plumb-floors', () => {
     await type(element, 'dh', '24,696(3) m');
     expect(words(element, '.stale')).to.contain(Y);
     expect(words(element, '.stale .tagc')).to.equal('before the last edit, which cannot be read');
-    expect(element.shadowRoot!.querySelector('.cite')).to.equal(null);
+    expect(element.shadowRoot!.querySelectorAll('.cite').length).to.equal(0);
     expect(element.answer).to.equal(null);
     const fault = element.shadowRoot!.querySelector('#n-dh [role=alert]')!;
     expect(fault.querySelector('.bad')?.textContent).to.equal(',');
@@ -116,7 +118,8 @@ describe('plumb-floors', () => {
     expect(field(element, 'dh').getAttribute('aria-describedby')).to.equal('n-dh');
     await expect(element).to.be.accessible();
     button(element, 'Go to the field').click();
-    expect(element.shadowRoot!.activeElement).to.equal(field(element, 'dh'));
+    await aTimeout(20);
+    expect(element.shadowRoot!.activeElement?.id).to.equal('f-dh');
     button(element, 'Write 24.696(3) m').click();
     await element.updateComplete;
     expect(words(element, '.s1')).to.contain('2.69795(33)e-15');
@@ -128,7 +131,7 @@ describe('plumb-floors', () => {
     one.value = '24.6(';
     one.dispatchEvent(new Event('input', { bubbles: true }));
     await element.updateComplete;
-    expect(element.shadowRoot!.querySelector('.stale')).to.equal(null);
+    expect(element.shadowRoot!.querySelectorAll('.stale').length).to.equal(0);
     await expectSoon(() => element.shadowRoot!.querySelector('.stale') !== null);
     expect(words(element, '#n-dh')).to.contain('open bracket');
   });
@@ -148,8 +151,8 @@ describe('plumb-floors', () => {
     );
     expect(words(element, '.flt')).to.contain('write transition="87Sr"');
     // there since the page was loaded: not announced
-    expect(element.shadowRoot!.querySelector('[role=alert]')).to.equal(null);
-    expect(element.shadowRoot!.querySelector('slot')).to.equal(null);
+    expect(element.shadowRoot!.querySelectorAll('[role=alert]').length).to.equal(0);
+    expect(element.shadowRoot!.querySelectorAll('slot').length).to.equal(0);
     expect(words(element)).not.to.match(/e-1\d/);
     await expect(element).to.be.accessible();
     element.dh = '12.348(3) m';
@@ -159,16 +162,16 @@ describe('plumb-floors', () => {
     element.dh = 'high';
     await element.updateComplete;
     expect(element.shadowRoot!.querySelector('.flt')?.getAttribute('role')).to.equal('alert');
-    expect(element.shadowRoot!.querySelector('.stale')).to.equal(null);
+    expect(element.shadowRoot!.querySelectorAll('.stale').length).to.equal(0);
   }).timeout(20_000);
 
   it('keeps the page’s own words while nothing is given, and computes once something is typed', async () => {
     const element = await fixture<PlumbFloors>(
       html`<plumb-floors><p>No script: ask the time office.</p></plumb-floors>`,
     );
-    expect(element.shadowRoot!.querySelector('slot')).not.to.equal(null);
+    expect(element.shadowRoot!.querySelectorAll('slot').length).to.equal(1);
     expect(words(element, '.s1')).to.contain('write the height');
-    expect(element.shadowRoot!.querySelector('.flt')).to.equal(null);
+    expect(element.shadowRoot!.querySelectorAll('.flt').length).to.equal(0);
     await expect(element).to.be.accessible();
     await type(element, 'dh', '3.2(1) m');
     expect(words(element, '#n-g')).to.contain('still wanted: gravity at the lower floor');
@@ -262,8 +265,8 @@ describe('plumb-floors', () => {
   });
 
   it('stands beside a second copy of the script', () => {
-    const define = () => customElements.get('plumb-floors');
-    expect(define()).to.equal(PlumbFloors);
+    expect(() => define('plumb-floors', class extends HTMLElement {})).not.to.throw();
+    expect(customElements.get('plumb-floors')).to.equal(PlumbFloors);
   });
 });
 
