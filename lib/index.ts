@@ -3,6 +3,7 @@ export { type FloorsAnswer, type FloorsInput, floors } from './answers/floors.js
 export { type PairAnswer, type PairInput, pair } from './answers/pair.js';
 export { predict } from './answers/predict.js';
 export type * from './answers/prediction.js';
+export { type LinkTide, TIDE_STEP_S, type TideAnswer, type TideLeft, tide } from './answers/tide.js';
 export type * from './campaign/campaign.js';
 export { CampaignError, type Fault, type Warning } from './campaign/fault.js';
 export { type ReadCampaign, readCampaign, readCampaignValue } from './campaign/read.js';

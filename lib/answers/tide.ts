@@ -215,21 +215,20 @@ const omittedAt = (campaign: Campaign, s: number): number => {
 
 function tideWarnings(campaign: Campaign, links: readonly LinkTide[]): Warning[] {
   const units = (y: number) => `${(y * 1e18).toPrecision(2)}e-18`;
-  return links.flatMap((link): Warning[] => {
-    const path = `links.${link.id}`;
-    const warnings: Warning[] = [];
-    if (link.left === null)
-      warnings.push({
-        code: 'never-available',
-        path,
-        message: 'the two clocks and the link have no common time inside the window; nothing is averaged.',
-      });
-    if (link.target !== null && link.omitted > HARMLESS_SHARE * link.target)
-      warnings.push({
-        code: 'tide-model-limit',
-        path,
-        message: `the tide left out may reach ${units(link.omitted)}, more than a third of the target ${units(link.target)}: diurnal core resonance, ${(campaign.pole ?? []).length > 0 ? '' : 'pole tide, '}ocean loading where it is not stated, air and water. Most of it averages out over weeks. State oceanLoading of the sites and pole of the campaign to narrow it.`,
-      });
-    return warnings;
-  });
+  const warnings: Warning[] = links
+    .filter((link) => link.left === null)
+    .map((link) => ({
+      code: 'never-available',
+      path: `links.${link.id}`,
+      message: 'the two clocks and the link have no common time inside the window; nothing is averaged.',
+    }));
+  const limited = links.filter((link) => link.target !== null && link.omitted > HARMLESS_SHARE * link.target);
+  const worst = limited.reduce<LinkTide | null>((a, b) => (a && a.omitted >= b.omitted ? a : b), null);
+  if (worst?.target != null)
+    warnings.push({
+      code: 'tide-model-limit',
+      path: 'links',
+      message: `the tide left out may reach ${units(worst.omitted)} (${worst.id}), more than a third of the target ${units(worst.target)}${limited.length > 1 ? `, and likewise on ${limited.length - 1} more` : ''}: diurnal core resonance, ${(campaign.pole ?? []).length > 0 ? '' : 'pole tide, '}ocean loading where it is not stated, air and water. Most of it averages out over weeks. State oceanLoading of the sites and pole of the campaign to narrow it.`,
+    });
+  return warnings;
 }
