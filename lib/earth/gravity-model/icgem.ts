@@ -1,5 +1,5 @@
 import { CampaignError, type Fault, type Warning } from '../../campaign/fault.js';
-import { DecimalScanner, latin1 } from './decimal-scanner.js';
+import { DecimalScanner, latin1 } from '../file-bytes/decimal-scanner.js';
 import { coefficientCount, coefficientIndex, type GravityModel, MAX_SYNTHESIS_DEGREE } from './gravity-model.js';
 import { type IcgemHeader, readIcgemHeader } from './icgem-header.js';
 import { normalizeCoefficients } from './normalization.js';

@@ -2,7 +2,7 @@ import { readFileSync } from 'node:fs';
 import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
 import { CampaignError } from '../../../../lib/campaign/fault.js';
-import { DecimalScanner } from '../../../../lib/earth/gravity-model/decimal-scanner.js';
+import { DecimalScanner } from '../../../../lib/earth/file-bytes/decimal-scanner.js';
 import { coefficientIndex, IcgemReader, parseIcgem, readIcgem } from '../../../../lib/earth/gravity-model/index.js';
 import { gfcPieces, syntheticModel } from '../../../data/gravity-model/synthetic-model.mjs';
 
