@@ -13,8 +13,16 @@ export interface AdjustedSite {
 
 export interface AdjustedDatum {
   readonly id: string;
-  /** adjusted W₀ − stated W₀, m²/s² */
-  readonly offset: { readonly value?: number; readonly u: number };
+  /** adjusted W₀ − stated W₀, m²/s²; only with `estimateOffset` */
+  readonly offset?: UnknownEstimate;
+  /** change of W₀ per metre of way to the north and to the east of the datum's origin, m²/s² per m; only with `estimateTilt` */
+  readonly tilt?: { readonly north: UnknownEstimate; readonly east: UnknownEstimate };
+}
+
+/** value left out where the network is only planned */
+export interface UnknownEstimate {
+  readonly value?: number;
+  readonly u: number;
 }
 
 export interface AdjustedObservation {
@@ -40,6 +48,29 @@ export interface Adjustment {
   readonly chi2?: number;
   readonly dof: number;
   readonly p?: number | null;
+  readonly loops: readonly LoopClosure[];
+  /** observations whose standardised residual the test would reject, worst first; none is dropped */
+  readonly outliers: readonly Outlier[];
+  /** full covariance of the unknowns, SI */
+  readonly covariance: { readonly unknowns: readonly string[]; readonly matrix: readonly (readonly number[])[] };
   readonly checks: readonly CheckResult[];
   readonly warnings: readonly Warning[];
+}
+
+/** Links around a loop: gravity, clocks and frequency ratios cancel, so the sum must be zero. */
+export interface LoopClosure {
+  /** link ids in the order of the walk, each with +1 where it is walked from → to */
+  readonly links: readonly { readonly id: string; readonly sign: 1 | -1 }[];
+  /** measured at the same time, so that the clocks' noise cancels too and only the links' is left */
+  readonly simultaneous: boolean;
+  /** Σ ±y of the measurements, in mean tide; u alone where the network is only planned */
+  readonly closure: { readonly value?: number; readonly u: number };
+  /** closure / u; null where only planned or exact */
+  readonly z: number | null;
+}
+
+export interface Outlier {
+  readonly id: string;
+  readonly standardised: number;
+  readonly warning: Warning;
 }

@@ -2,7 +2,7 @@ import type { Campaign } from '../campaign/campaign.js';
 import type { Warning } from '../campaign/fault.js';
 import { frequencyOfTransitionHz } from '../clocks/transition-frequency.js';
 import { SPEED_OF_LIGHT_SQUARED_M2_PER_S2 } from '../constants/defining-constants.js';
-import type { DeterminationObservation, Model } from '../model/model.js';
+import type { Model } from '../model/model.js';
 import { hasLevel } from '../model/site-potentials.js';
 import { contributions } from '../uncertainty/budget.js';
 import { chiSquareUpperTail } from '../uncertainty/distributions/index.js';
@@ -32,7 +32,7 @@ export function predictionOf(solved: SolvedCampaign): Prediction {
       d.site === s
         ? [
             {
-              kind: site.determinations[indexInSite(d)]!.kind,
+              kind: site.determinations[d.position]!.kind,
               W: level[s] ? estimate(potentialByDetermination(d, potentials)) : null,
             },
           ]
@@ -92,8 +92,6 @@ export function predictionOf(solved: SolvedCampaign): Prediction {
     warnings,
   };
 }
-
-const indexInSite = (d: DeterminationObservation): number => Number(d.path.slice(d.path.lastIndexOf('.') + 1));
 
 export function budgetOf(model: Model, y: Dependent): BudgetRow[] {
   return contributions(model.covariance, y.gradient).map(({ input, ...row }) => {

@@ -44,6 +44,7 @@ export function determinationObservation(
     ...atEstimates(f, (i) => inputs[i]!.value),
     path,
     site: siteIndex,
+    position: index,
     from: determination.kind === 'levelled-from' ? context.siteIndex.get(determination.site)! : null,
     check: determination.check,
     candidate: determination.candidate,

@@ -11,6 +11,8 @@ export interface DeterminationObservation extends Dependent {
   readonly path: string;
   /** index into campaign.sites */
   readonly site: number;
+  /** position among the site's determinations */
+  readonly position: number;
   /** index of the site it was levelled from; null for an absolute determination */
   readonly from: number | null;
   /** compared with the result, not fitted */

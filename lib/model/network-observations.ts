@@ -5,22 +5,9 @@ import { sizeText } from '../quantity/size.js';
 import { combineGradients, type Dependent, type Gradient } from '../uncertainty/gradient.js';
 import { type MeasuredOffset, measuredOffset, toMeanTideOffset, transitionOffset } from './frequency-comparison.js';
 import { clocksOfLink, type DeterminationObservation, type Model, siteIndexOfClock } from './model.js';
+import type { NetworkUnknowns } from './network-unknowns.js';
 
 const C2 = SPEED_OF_LIGHT_SQUARED_M2_PER_S2;
-
-/** Unknowns of the network: the sites' potentials, then the offsets of datums that ask for it. */
-export interface NetworkUnknowns {
-  readonly sites: number;
-  /** datum ids with `estimateOffset`, in file order */
-  readonly offsets: readonly string[];
-  readonly count: number;
-}
-
-export function networkUnknowns(model: Model): NetworkUnknowns {
-  const offsets = model.campaign.datums.filter((d) => d.estimateOffset).map((d) => d.id);
-  const sites = model.campaign.sites.length;
-  return { sites, offsets, count: sites + offsets.length };
-}
 
 /** One observation of the network, m²/s². */
 export interface NetworkObservation {
@@ -45,10 +32,15 @@ export function determinationInNetwork(
   const design: [number, number][] = [[d.site, 1]];
   if (d.from !== null) design.push([d.from, -1]);
   let { gradient } = d;
-  const offset = d.datum === null ? -1 : unknowns.offsets.indexOf(d.datum);
-  if (offset >= 0) {
-    design.push([unknowns.sites + offset, -1]);
-    gradient = withoutInput(gradient, (i) => model.inputs[i]!.path === `datums.${d.datum}.W0`);
+  const datum = unknowns.datums.find((x) => x.id === d.datum);
+  // W₀ at the site is the stated one + offset + tilt·(way from the origin), so the stated one observes W minus those
+  if (datum && datum.offset !== null) {
+    design.push([datum.offset, -1]);
+    gradient = withoutInput(gradient, (i) => model.inputs[i]!.path === `datums.${datum.id}.W0`);
+  }
+  if (datum?.tilt) {
+    const { northM, eastM } = datum.tilt.wayFromOrigin(model.campaign.sites[d.site]!);
+    design.push([datum.tilt.north, -northM], [datum.tilt.east, -eastM]);
   }
   return { id: d.path, value: d.value, gradient, design, absolute: d.from === null };
 }
