@@ -1,5 +1,12 @@
 /** The public door of Plumbtick's library. */
 export { type FloorsAnswer, type FloorsInput, floors } from './answers/floors.js';
+export {
+  type LinkMonteCarlo,
+  type MonteCarloPrediction,
+  type MonteCarloRequest,
+  predictMonteCarlo,
+  predictMonteCarloSteps,
+} from './answers/monte-carlo.js';
 export { type PairAnswer, type PairInput, pair } from './answers/pair.js';
 export { predict } from './answers/predict.js';
 export type * from './answers/prediction.js';
@@ -10,3 +17,11 @@ export { type ReadCampaign, readCampaign, readCampaignValue } from './campaign/r
 export { campaignJsonSchema, type JsonSchema } from './campaign/schema/index.js';
 export { version } from './constants/version.js';
 export * from './report/index.js';
+export {
+  type MonteCarloOptions,
+  type MonteCarloOutput,
+  type MonteCarloProgress,
+  type MonteCarloResult,
+  monteCarloSteps,
+  runMonteCarlo,
+} from './uncertainty/monte-carlo/index.js';

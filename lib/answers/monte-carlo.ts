@@ -51,11 +51,20 @@ export interface MonteCarloPrediction extends Prediction {
  * @throws {CampaignError} the campaign contradicts itself, or its correlations are beyond its distributions
  * @throws {DomainError} trials or seed outside their domain */
 export function predictMonteCarlo(campaign: Campaign, request: MonteCarloRequest): MonteCarloPrediction {
-  const solved = solveCampaign(campaign);
-  const steps = linkMonteCarloSteps(solved, request);
+  const steps = predictMonteCarloSteps(campaign, request);
   let step = steps.next();
   while (!step.done) step = steps.next();
-  return withMonteCarlo(solved, step.value);
+  return step.value;
+}
+
+/** The same in slices of some milliseconds: yields how far it is and returns the answer, for a worker or between two frames of a
+ *  page; who wants no more of it stops asking. */
+export function* predictMonteCarloSteps(
+  campaign: Campaign,
+  request: MonteCarloRequest,
+): Generator<MonteCarloProgress, MonteCarloPrediction, void> {
+  const solved = solveCampaign(campaign);
+  return withMonteCarlo(solved, yield* linkMonteCarloSteps(solved, request));
 }
 
 /** Runs the trials of all links that have a prediction, in slices; see {@link monteCarloSteps}. */
