@@ -5,6 +5,7 @@ import { withPlaces } from '../../lib/campaign/locate.js';
 import { readCampaign } from '../../lib/campaign/read.js';
 import { PlumbElement } from '../plumb-element.js';
 import { computedBy } from '../shared/provenance.js';
+import { sentenceCase } from '../shared/rich-text.js';
 import { warningList } from '../shared/warnings.js';
 import { type AnsweredCampaign, CampaignProvider, type CampaignState } from '../state/campaign-context.js';
 import { campaignStyles } from './campaign-styles.js';
@@ -217,5 +218,3 @@ export class PlumbCampaign extends PlumbElement {
 function placed(text: string, faults: readonly Fault[]): readonly Fault[] {
   return faults.some(({ line }) => line === null) ? withPlaces(text, faults) : faults;
 }
-
-const sentenceCase = (words: string): string => `${words[0]?.toUpperCase()}${words.slice(1)}`;

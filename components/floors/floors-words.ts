@@ -1,6 +1,6 @@
 import type { FloorsAnswer, FloorsMeasured } from '../../lib/answers/floors.js';
 import { formatConcise, formatEstimate, formatScaled } from '../../lib/quantity/index.js';
-import { num, type RichText, sym } from '../shared/rich-text.js';
+import { num, type RichText, sentenceCase, sym } from '../shared/rich-text.js';
 
 /** Names of the two floors in the order of the height difference: counted from, counted to. */
 export interface FloorNames {
@@ -75,7 +75,7 @@ function conditions(answer: FloorsAnswer, asGiven: Readonly<Record<string, strin
 export function citation(answer: FloorsAnswer, names: FloorNames, asGiven: Readonly<Record<string, string>>): RichText {
   const height = asGiven['dh'] ?? formatEstimate(answer.dH, 'length', 'm');
   return [
-    `${names.to[0]?.toUpperCase()}${names.to.slice(1)} minus ${names.from}: `,
+    `${sentenceCase(names.to)} minus ${names.from}: `,
     sym('y'),
     ' = ',
     offset(answer.y.value, answer.y.u),

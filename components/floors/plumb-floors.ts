@@ -112,7 +112,7 @@ export class PlumbFloors extends ArticleElement<Shown> {
     const cells = (text: string, unit: string) =>
       html`<td>${alignedNumber(text, column)}</td>
         <td class="u">${unit}</td>`;
-    return html`<tbody>
+    return html`<tbody class=${this.isStale ? 'was-good' : ''}>
       <tr><th scope="row"><i class="s">g</i>·Δ<i class="s">H</i></th>${cells(linear, 'm²/s²')}</tr>
       <tr><th scope="row">−½ <i class="s">Γ</i>·Δ<i class="s">H</i>²</th>${cells(quadratic, 'm²/s²')}</tr>
       <tr class="sum"><th scope="row">Δ<i class="s">W</i></th>${cells(dW, 'm²/s²')}</tr>

@@ -6,7 +6,7 @@ import { LENGTH_NOTE, SIGN_NOTE, tideNote } from '../../lib/report/conventions.j
 import { PlumbElement } from '../plumb-element.js';
 import { inputName } from '../shared/input-name.js';
 import { alignedNumber, pointColumn } from '../shared/number.js';
-import { num, type RichText, richText } from '../shared/rich-text.js';
+import { num, type RichText, richText, sentenceCase } from '../shared/rich-text.js';
 import { type AnsweredCampaign, CampaignConsumer } from '../state/campaign-context.js';
 import { linksStyles } from './links-styles.js';
 
@@ -134,8 +134,6 @@ export class PlumbLinks extends PlumbElement {
     return html`<slot></slot>`;
   }
 }
-
-const sentenceCase = (words: string): string => `${words[0]?.toUpperCase()}${words.slice(1)}`;
 
 function description(link: LinkPrediction, stated: Link | undefined): string {
   const kind = stated?.kind ? `, ${stated.kind}` : '';

@@ -1,6 +1,6 @@
 import type { PairAnswer, PairBudgetGroup } from '../../lib/answers/pair.js';
 import { formatConcise, formatEstimate, formatLength } from '../../lib/quantity/index.js';
-import { num, type RichPart, type RichText, sym } from '../shared/rich-text.js';
+import { num, type RichPart, type RichText, sentenceCase, sym } from '../shared/rich-text.js';
 
 const SYMBOLS: Readonly<Record<string, RichPart>> = {
   h: sym('h'),
@@ -54,7 +54,7 @@ export function citation(answer: PairAnswer, correlation: string | null): RichTe
     ? [', ', sym('ζ'), ' correlated with ', sym('ρ'), ` = ${correlation}`]
     : [];
   return [
-    `${siteName(answer, 'b')} minus ${siteName(answer, 'a')}, marker to marker: `,
+    `${sentenceCase(siteName(answer, 'b'))} minus ${siteName(answer, 'a')}, marker to marker: `,
     sym('y'),
     ' = ',
     num(formatConcise(y.value, y.u)),

@@ -224,7 +224,7 @@ export class PlumbPair extends ArticleElement<PairAnswer> {
     const column = pointColumn(rows.map(({ text }) => text));
     return html`<table class="values">
       <caption class="only-spoken">B seen from A</caption>
-      <tbody>
+      <tbody class=${this.isStale ? 'was-good' : ''}>
         ${rows.map(
           ({ name, text, unit, className }) => html`<tr class=${className}>
             <th scope="row">${name}</th>
@@ -242,7 +242,11 @@ export class PlumbPair extends ArticleElement<PairAnswer> {
       ? formatLength(row.u, 2)
       : `${formatConcise(row.u, null, { significant: 1 })}\u00a0${row.input.endsWith('-g') ? 'm/s²' : 's⁻²'}`;
     return html`<tr class="${className} ${row.share < 0 ? 'neg' : ''}">
-      <th scope="row">${richText(words.inputName(answer, row.input))}</th>
+      <th scope="row">
+        ${richText(words.inputName(answer, row.input))}${
+          row.share < 0 ? html`<small class="dim">its error takes part of the other’s away</small>` : nothing
+        }
+      </th>
       <td class="own-u">${quantityText(u)}</td>
       <td>${quantityText(formatConcise(row.uy * 1e18, null, { significant: 2 }))}</td>
       <td class="bw">${shareBar(row.share, 'input', scale)}</td>
@@ -275,12 +279,12 @@ export class PlumbPair extends ArticleElement<PairAnswer> {
         <tr>
           <th scope="col">input</th>
           <th scope="col" class="own-u"><i class="s">u</i></th>
-          <th scope="col"><i class="s">u</i>(<i class="s">y</i>) / 1e-18</th>
+          <th scope="col"><i class="s">u</i>(<i class="s">y</i>) <span class="nb">/ 1e-18</span></th>
           <th scope="col" class="bw">share of the variance</th>
           <th scope="col">%</th>
         </tr>
       </thead>
-      <tbody>${answer.groups.map((group) => this.#group(answer, group, scale))}</tbody>
+      <tbody class=${this.isStale ? 'was-good' : ''}>${answer.groups.map((group) => this.#group(answer, group, scale))}</tbody>
     </table>`;
   }
 

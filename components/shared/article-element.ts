@@ -256,6 +256,11 @@ export abstract class ArticleElement<Answer> extends PlumbElement {
     </tr>`;
   }
 
+  /** The numbers shown are those before an edit that cannot be read. */
+  protected get isStale(): boolean {
+    return this.#reading !== null && !this.#reading.ok && this.#settled;
+  }
+
   protected isEdited(name: string): boolean {
     return this.#edits.has(name);
   }

@@ -90,6 +90,22 @@ export const articleStyles = css`
     bottom: 0;
     border-left: var(--p-w-bar) solid var(--p-accent);
   }
+  .was-good th {
+    position: relative;
+  }
+  .values .was-good th::after,
+  .budget .was-good tr:not(.kid) th::after {
+    content: '';
+    position: absolute;
+    left: -10px;
+    top: 0;
+    bottom: 0;
+    border-left: 4px double var(--p-caution);
+  }
+  .budget small {
+    display: block;
+    font-size: var(--p-size-1);
+  }
   .field.ed {
     font-weight: 700;
     color: var(--p-accent);

@@ -10,6 +10,9 @@ export const sym = (symbol: string, sub?: string): RichPart => (sub === undefine
 /** A formatted number, with its unit if it has one. */
 export const num = (number: string): RichPart => ({ number });
 
+/** With a capital at its beginning. */
+export const sentenceCase = (words: string): string => `${words[0]?.toUpperCase() ?? ''}${words.slice(1)}`;
+
 /** As words for the clipboard, a title or a screen reader's label. */
 export const plainText = (parts: RichText): string =>
   parts

@@ -302,6 +302,7 @@ export const sharedStyles = css`
     }
     .field {
       border-bottom: 0;
+      appearance: none;
     }
   }
 `;

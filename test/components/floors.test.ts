@@ -108,6 +108,7 @@ describe('plumb-floors', () => {
     const element = await fixture<PlumbFloors>(given);
     await type(element, 'dh', '24,696(3) m');
     expect(words(element, '.stale')).to.contain(Y);
+    expect(words(element, '.was-good')).to.contain('121.240(29)');
     expect(words(element, '.stale .tagc')).to.equal('before the last edit, which cannot be read');
     expect(element.shadowRoot!.querySelectorAll('.cite').length).to.equal(0);
     expect(element.answer).to.equal(null);

@@ -84,6 +84,7 @@ describe('plumb-pair', () => {
     await type(element, 'correlation', '0.95');
     const negative = [...element.shadowRoot!.querySelectorAll('.budget tr.neg')];
     expect(negative).to.have.length(1);
+    expect(negative[0]!.querySelector('small')?.textContent).to.contain('part of the other’s away');
     const rect = negative[0]!.querySelector('rect')!;
     expect(rect.getAttribute('class')).to.equal('s-neg');
     const zero = Number.parseFloat(negative[0]!.querySelector('line')!.getAttribute('x1')!);
