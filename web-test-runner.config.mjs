@@ -49,6 +49,7 @@ try {
 
 export default {
   files: 'test/components/**/*.test.ts',
+  hostname: '127.0.0.1', // a bare machine may not know the name localhost
   nodeResolve: { exportConditions: ['production', 'default'] },
   plugins: [bundled, esbuildPlugin({ ts: true, target: 'es2022', tsconfig: path.join(root, 'tsconfig.json'), define })],
   // Coverage of the elements; lib/ is covered under vitest, where its tests are. The limits only catch an element without tests.
