@@ -12,6 +12,8 @@ export interface OptionSpec {
 export interface Call {
   /** Name of the file as given (`-` is standard input) and its text; null where the command takes no file */
   readonly file: { readonly name: string; readonly text: string } | null;
+  /** Name of the file as given, where the command reads it itself (`takesFile: 'data'`) too; null without one */
+  readonly fileName: string | null;
   /** Value of an option, null if it was not given */
   option(name: string): string | null;
   /** All values of a repeatable option, in order */
@@ -49,7 +51,8 @@ export interface Command {
   /** Paragraphs for someone who meets the command for the first time */
   readonly description: readonly string[];
   readonly examples: readonly string[];
-  readonly takesFile: boolean;
+  /** `data`: a file that is no campaign, which the command opens itself */
+  readonly takesFile: boolean | 'data';
   readonly options: Readonly<Record<string, OptionSpec>>;
   run(call: Call): Answer | PlainText | Promise<Answer | PlainText>;
 }

@@ -56,8 +56,8 @@ export async function main(words: readonly string[]): Promise<Status> {
     const form = formOf(command, parsed);
     const name = fileOf(command, parsed);
     fileName = name ?? '';
-    const text = name === null ? null : await readFileText(name);
-    const call = callOf(parsed, name === null || text === null ? null : { name, text });
+    const text = name === null || command.takesFile === 'data' ? null : await readFileText(name);
+    const call = callOf(parsed, name, name === null || text === null ? null : { name, text });
     return print(await command.run(call), form, parsed.values.get('table')?.[0] ?? null);
   } catch (error) {
     if (error instanceof UsageError) {
@@ -126,8 +126,9 @@ function fileOf(command: Command, { positionals }: ParsedWords): string | null {
   return name ?? null;
 }
 
-const callOf = ({ values }: ParsedWords, file: Call['file']): Call => ({
+const callOf = ({ values }: ParsedWords, fileName: string | null, file: Call['file']): Call => ({
   file,
+  fileName,
   option: (name) => values.get(name)?.[0] ?? null,
   values: (name) => values.get(name) ?? [],
   has: (name) => values.has(name),

@@ -1,10 +1,13 @@
 import type { Command } from '../command.js';
+import { adjust } from './adjust.js';
 import { check } from './check.js';
+import { design } from './design.js';
 import { floors } from './floors.js';
+import { grid } from './grid.js';
 import { newCampaign } from './new.js';
 import { pair } from './pair.js';
 import { predict } from './predict.js';
 import { tide } from './tide.js';
 
 /** Every command, in the order of the help. */
-export const commands: readonly Command[] = [floors, pair, newCampaign, check, predict, tide];
+export const commands: readonly Command[] = [floors, pair, newCampaign, check, predict, adjust, design, tide, grid];

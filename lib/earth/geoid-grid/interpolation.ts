@@ -115,7 +115,7 @@ function outside(grid: GeoidGrid, latitudeDeg: number, longitudeDeg: number, sou
   );
 }
 
-const round = (degrees: number): number => Number(degrees.toFixed(9));
+const round = (degrees: number): number => Number(degrees.toFixed(12));
 
 /** Value at a point from the nodes round it. Nodes of weight 0 (a point on a grid line) need no value.
  * @throws {CampaignError} `outside-grid`; `nodata`: a node that counts has no value; `stencil`: bicubic within one cell of the border */
