@@ -1,5 +1,6 @@
 /** The public door of Plumbtick's library. */
 export { type FloorsAnswer, type FloorsInput, floors } from './answers/floors.js';
+export { type GridAnswer, type GridQuestion, grid } from './answers/grid.js';
 export {
   type LinkMonteCarlo,
   type MonteCarloPrediction,
@@ -16,6 +17,9 @@ export { CampaignError, type Fault, type Warning } from './campaign/fault.js';
 export { type ReadCampaign, readCampaign, readCampaignValue } from './campaign/read.js';
 export { campaignJsonSchema, type JsonSchema } from './campaign/schema/index.js';
 export { version } from './constants/version.js';
+export { type ByteSource, bytesSource } from './earth/file-bytes/byte-source.js';
+export * from './earth/geoid-grid/index.js';
+export * from './earth/gravity-model/index.js';
 export * from './report/index.js';
 export {
   type MonteCarloOptions,

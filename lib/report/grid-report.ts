@@ -50,7 +50,7 @@ const nodesTable = ({ nodes }: GridAnswer): Table => ({
 const headerTable = (answer: GridAnswer): Table => ({
   id: 'header',
   title: 'The file as it was understood',
-  columns: [textColumn(''), textColumn('')],
+  columns: [textColumn('what'), textColumn('as read')],
   rows: [
     ['format', answer.format],
     [
