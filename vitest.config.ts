@@ -7,7 +7,7 @@ export default defineConfig({
   define: { __PLUMBTICK_VERSION__: JSON.stringify(version) },
   test: {
     include: ['test/{lib,published,cli}/**/*.test.ts'],
-    testTimeout: 20_000,
+    testTimeout: 60_000,
     coverage: { provider: 'v8', include: ['lib/**/*.ts'] },
   },
 });

@@ -60,5 +60,9 @@ export default {
     threshold: { statements: 60, lines: 60, branches: 50, functions: 50 },
   },
   reporters: [defaultReporter(), closingLine()],
+  // generous: a busy machine is no fault
+  testFramework: { config: { timeout: 20_000 } },
+  testsStartTimeout: 60_000,
+  testsFinishTimeout: 300_000,
   browsers: [chromeLauncher({ launchOptions })],
 };
