@@ -47,25 +47,35 @@ const marked = (level: Level, x: number, y: number): SVGTemplateResult =>
 /** Two equipotentials with the height between them, drawn to scale; u as thickness of the farther level at a stated multiple. */
 export function twoLevels(figure: TwoLevelsFigure): TemplateResult {
   const { from, to, heightM, uM, heightText, sideBySide } = figure;
-  const level = heightM === 0;
+  // a height that its own uncertainty covers is drawn as one level, in words not to scale
+  const level = Math.abs(heightM) < 4 * uM || heightM === 0;
   const up = heightM >= 0;
   const middle = (TOP + BOTTOM) / 2;
   const yFrom = level ? middle : up ? BOTTOM : TOP;
   const yTo = level ? middle : up ? TOP : BOTTOM;
-  const multiple = bandMultiple(heightM, uM);
-  const half = multiple === null ? 0 : Math.max(1.5, (uM * multiple * (BOTTOM - TOP)) / Math.abs(heightM));
+  const multiple = level ? null : bandMultiple(heightM, uM);
+  const half =
+    level && uM > 0 ? 11 : multiple === null ? 0 : Math.max(1.5, (uM * multiple * (BOTTOM - TOP)) / Math.abs(heightM));
   const xFrom = sideBySide ? 38 : 48;
   const xTo = sideBySide ? 96 : level ? 116 : 48;
   const arrow = 138;
   const labelUp = (y: number) => y - Math.max(half, 8) - 6;
-  const caption = level ? nothing : multiple === null ? 'exact: no band' : multiple === 1 ? '± u, to scale' : null;
+  const caption = level
+    ? uM > 0
+      ? `${heightText}, not to scale`
+      : nothing
+    : multiple === null
+      ? 'exact: no band'
+      : multiple === 1
+        ? '± u, to scale'
+        : null;
   return html`<svg
     class="levels"
     width=${WIDTH}
     height="206"
     viewBox="0 0 ${WIDTH} 206"
     role="img"
-    aria-label=${`${to.label} ${heightText} ${level ? 'level with' : up ? 'above' : 'below'} ${from.label}`}
+    aria-label=${`${to.label} ${heightText} ${heightM === 0 ? 'level with' : up ? 'above' : 'below'} ${from.label}`}
   >
     ${
       half > 0
@@ -85,7 +95,10 @@ export function twoLevels(figure: TwoLevelsFigure): TemplateResult {
         : svg`<line x1=${arrow} y1=${TOP} x2=${arrow} y2=${BOTTOM} class="s-dim"/>
       <path d="M${arrow} ${TOP}l-2.8 7h5.6zM${arrow} ${BOTTOM}l-2.8 -7h5.6z" class="s-arrow"/>
       <text x=${arrow - 6} y=${middle} class="lb halo" text-anchor="middle" transform="rotate(-90 ${arrow - 6} ${middle})">${heightText}</text>
-      <text x="8" y="199" class="l2">${caption ?? svg`± <tspan class="sy">u</tspan> drawn ${String(multiple)} times`}</text>`
+`
     }
+    <text x="8" y="199" class="l2">
+      ${caption ?? svg`± <tspan class="sy">u</tspan> drawn ${String(multiple)} times`}
+    </text>
   </svg>`;
 }

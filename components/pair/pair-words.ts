@@ -36,7 +36,10 @@ function limit(answer: PairAnswer): RichText {
 export function sentence(answer: PairAnswer): RichText {
   const { y, dHNormal } = answer;
   const [a, b] = [siteName(answer, 'a'), siteName(answer, 'b')];
-  if (y.value === 0) return [`Clocks at ${b} and ${a} run alike.`, ...limit(answer)];
+  if (y.value === 0) {
+    const within: RichText = y.u > 0 ? [' within ', num(formatConcise(y.u, null, { significant: 2 }))] : [];
+    return [`Clocks at ${b} and ${a} run alike`, ...within, '.', ...limit(answer)];
+  }
   const runs = y.value > 0 ? 'fast' : 'slow';
   return [
     `A clock at ${b} runs ${runs} by `,

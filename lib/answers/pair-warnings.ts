@@ -52,7 +52,12 @@ function tideWarnings(input: PairInput, { dH, y }: LinkPrediction, again: Again)
       {
         code: 'tide-label-missing',
         path: option,
-        message: `no permanent-tide label for ${what}; taken as ${taken} at both sites. If it is ${worst.system}, the difference is off by ${millimetres(worst.dH)} (${Math.abs(worst.y).toExponential(1)}). Write ${option}="${taken}" or what is right.`,
+        message: `no permanent-tide label for ${what}; taken as ${taken} at both sites. ${
+          // a hundredth of the smallest digit that anyone states
+          Math.abs(worst.dH) < 1e-6
+            ? 'Between these sites it cancels'
+            : `If it is ${worst.system}, the difference is off by ${millimetres(worst.dH)} (${Math.abs(worst.y).toExponential(1)})`
+        }. Write ${option}="${taken}" or what is right.`,
       },
     ];
   });

@@ -57,6 +57,15 @@ describe('plumb-floors', () => {
     expect(Number(figure.querySelector('.s-band')?.getAttribute('height'))).to.be.closeTo(12.24, 0.01);
   });
 
+  it('draws a height that its uncertainty covers as one level, and says so', async () => {
+    const element = await fixture<PlumbFloors>(html`<plumb-floors dh="1(1) cm" g="9.81"></plumb-floors>`);
+    const figure = element.shadowRoot!.querySelector('svg.levels')!;
+    expect(figure.textContent).to.contain('1(1) cm, not to scale');
+    const band = figure.querySelector('.s-band')!;
+    expect(Number(band.getAttribute('height'))).to.equal(22);
+    expect(Number(band.getAttribute('y'))).to.be.within(0, 206 - 22);
+  });
+
   it('names version and day in the line to cite', async () => {
     const element = await fixture<PlumbFloors>(given);
     const now = new Date();
