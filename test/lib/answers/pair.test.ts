@@ -154,7 +154,7 @@ describe('pair: warnings', () => {
   it('sizes a missing tide label as the same mistake at both sites', () => {
     expect(codes({ hTide: null })).toEqual(['tide-label-missing h-tide']);
     expect(codes({ geoidTide: null })).toEqual(['tide-label-missing geoid-tide']);
-    const alike = pair({ ...input, hTide: null, b: { ...ridge, latitudeDeg: harbour.latitudeDeg } });
+    const alike = pair({ ...input, hTide: null, b: { ...harbour, longitudeDeg: 5.8 } });
     expect(alike.warnings[0]!.message).toContain('it cancels');
     const far = { ...input, hTide: null, b: { ...ridge, latitudeDeg: 10 } };
     const stated = (hTide: 'free' | 'mean') => pair({ ...far, hTide }).y.value;
