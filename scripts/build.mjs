@@ -1,6 +1,6 @@
 // Builds dist/: the library and the elements as ES modules, one classic script for a <script> tag, the command line,
 // the JSON Schema of the campaign file and one HTML page that works from disk. `--types` also writes the declarations;
-// `--cli FILE` builds the command line alone.
+// `--cli FILE` builds the command line alone, `--out FOLDER` everything into a folder other than dist/.
 // Files are written beside and renamed, so that a page or a test never reads half of one.
 import { execFileSync } from 'node:child_process';
 import crypto from 'node:crypto';
@@ -11,7 +11,6 @@ import * as esbuild from 'esbuild';
 import { inlineWorker } from './esbuild-plugins.mjs';
 
 const root = fileURLToPath(new URL('..', import.meta.url));
-const dist = path.join(root, 'dist');
 const { version } = JSON.parse(fs.readFileSync(path.join(root, 'package.json'), 'utf8'));
 /** In a page that is not declared as UTF-8 the byte order mark is what keeps Δ and ² whole: tagged templates can't be escaped. */
 const byteOrderMark = '\uFEFF';
@@ -37,7 +36,6 @@ const commandLine = {
   target: 'node20',
   minifySyntax: true,
   legalComments: 'inline',
-  external: ['geotiff'], // loaded from node_modules when a grid asks for it
   banner: {
     // bundled CommonJS packages may call require
     js: '#!/usr/bin/env node\nimport { createRequire as __createRequire } from "node:module"; const require = __createRequire(import.meta.url);',
@@ -49,10 +47,12 @@ function standalonePage(script) {
   const inline = script.replace(/<\/script/gi, '<\\/script').replace(/<!--/g, '<\\!--');
   const hash = crypto.createHash('sha256').update(inline, 'utf8').digest('base64');
   const template = fs.readFileSync(path.join(root, 'scripts', 'standalone.template.html'), 'utf8');
-  return template
-    .replace('{{script-hash}}', () => `sha256-${hash}`)
-    .replaceAll('{{version}}', () => version)
-    .replace('{{script}}', () => inline);
+  const put = (page, mark, text) => {
+    if (!page.includes(mark)) throw new Error(`scripts/standalone.template.html has lost its ${mark}`);
+    return page.replaceAll(mark, () => text);
+  };
+  const page = put(put(template, 'SCRIPT-HASH', `sha256-${hash}`), 'VERSION', version);
+  return put(page, '<!-- SCRIPT -->', `<script>${inline}</script>`); // last: nothing inside the script is a mark
 }
 
 function write(file, contents, mode = 0o644) {
@@ -69,7 +69,7 @@ function files(folder) {
   });
 }
 
-export async function build({ types = false } = {}) {
+export async function build({ types = false, dist = path.join(root, 'dist') } = {}) {
   const results = await Promise.all([
     esbuild.build({
       ...common,
@@ -87,7 +87,6 @@ export async function build({ types = false } = {}) {
       globalName: 'plumbtick',
       minify: true,
       legalComments: 'eof',
-      external: ['geotiff'], // a hundred kilobytes that only the command line needs
     }),
     esbuild.build(commandLine),
   ]);
@@ -98,10 +97,11 @@ export async function build({ types = false } = {}) {
   };
   for (const { path: file, text } of results.flatMap((result) => result.outputFiles)) {
     const name = path.basename(file);
+    const target = path.join(dist, name);
     if (name === 'plumbtick.js') {
-      put(file, byteOrderMark + text);
+      put(target, byteOrderMark + text);
       put(path.join(dist, 'standalone.html'), standalonePage(text));
-    } else put(file, text, name === 'cli.js' ? 0o755 : 0o644);
+    } else put(target, text, name === 'cli.js' ? 0o755 : 0o644);
   }
   const { campaignJsonSchema } = await import(`${pathToFileURL(path.join(dist, 'index.js'))}?${Date.now()}`);
   put(path.join(dist, 'plumbtick-campaign.schema.json'), `${JSON.stringify(campaignJsonSchema(), null, 2)}\n`);
@@ -130,11 +130,15 @@ if (process.argv[1] && pathToFileURL(process.argv[1]).href === import.meta.url) 
   try {
     const started = performance.now();
     const only = process.argv.indexOf('--cli');
+    const folder = process.argv.indexOf('--out');
     if (only > 0) {
       await buildCommandLine(process.argv[only + 1]);
       process.exit(0);
     }
-    const written = await build({ types: process.argv.includes('--types') });
+    const written = await build({
+      types: process.argv.includes('--types'),
+      ...(folder > 0 ? { dist: path.resolve(process.argv[folder + 1]) } : {}),
+    });
     for (const file of written.filter((name) => !name.endsWith('.map')))
       console.log(`${path.relative(root, file).padEnd(44)} ${String(fs.statSync(file).size).padStart(8)} B`);
     console.log(`built ${version} in ${((performance.now() - started) / 1000).toFixed(1)} s`);

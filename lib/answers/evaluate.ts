@@ -19,6 +19,7 @@ import type { Evaluation, LinkEvaluation, Verdict } from './evaluation.js';
 import type { Estimate } from './prediction.js';
 import { difference, estimateOf, lengthEquivalent, meanGravity, normalHeight } from './quantities.js';
 import { type SolvedCampaign, solveCampaign } from './solve-campaign.js';
+import { suspectsOf } from './suspects/suspects.js';
 
 const C2 = SPEED_OF_LIGHT_SQUARED_M2_PER_S2;
 
@@ -105,6 +106,7 @@ function linkEvaluation(solved: SolvedCampaign, comparison: Comparison, effectM:
     p: z === null ? null : 2 * normalCdf(-Math.abs(z)),
     verdict,
     smallestDetectableM,
+    suspects: verdict === 'differ' ? suspectsOf(solved, offset.index) : [],
     inferred: {
       dW: withStatistics(dW, C2),
       dH: withStatistics(lengthEquivalent(dW, g), C2 / g.value),

@@ -1,5 +1,6 @@
 import type { Warning } from '../campaign/fault.js';
 import type { CheckResult, Estimate } from './prediction.js';
+import type { Suspect } from './suspects/suspects.js';
 
 export type Verdict = 'agree' | 'differ' | 'inconclusive';
 
@@ -21,6 +22,8 @@ export interface LinkEvaluation {
   readonly verdict: Verdict | null;
   /** smallest discrepancy the comparison shows at test size 0.05 and power 0.8, as length equivalent, m */
   readonly smallestDetectableM: number | null;
+  /** single mistakes held against the residual, best first; empty unless the verdict is `differ` */
+  readonly suspects: readonly Suspect[];
   /** what the clocks alone say, frequency offsets taken off, campaign's tide system */
   readonly inferred: {
     readonly dW: Estimate;
