@@ -81,23 +81,31 @@ export async function gridExcerpt(grid: GeoidGrid, latitudeDeg: number, longitud
   const lastColumn = wrap ? column.cell + 2 : Math.min(columns - 1, column.cell + 2);
   const rowNumbers = range(firstRow, lastRow);
   const columnNumbers = range(firstColumn, lastColumn);
+  // a closed row whose first column stands there again counts periods, not columns, from the west
+  const inFile = columnNumbers
+    .map((c) => (period === null ? c : ((c % period) + period) % period))
+    .map((c) => (east ? c : columns - 1 - c));
   const valuesM: (number | null)[][] = [];
-  for (const r of rowNumbers) {
-    const inFile = north ? r : rows - 1 - r;
-    const values: (number | null)[] = [];
-    for (const c of columnNumbers) {
-      const wrapped = period === null ? c : ((c % period) + period) % period;
-      // a closed row whose first column stands there again counts periods, not columns, from the west
-      const [value] = await grid.readBlock(inFile, east ? wrapped : columns - 1 - wrapped, 1, 1);
-      values.push(Number.isNaN(value) ? null : value!);
-    }
-    valuesM.push(values);
-  }
+  for (const r of rowNumbers) valuesM.push(await readColumns(grid, north ? r : rows - 1 - r, inFile));
   return {
     latitudesDeg: rowNumbers.map((r) => latitudeOfRowDeg(grid, north ? r : rows - 1 - r)),
     longitudesDeg: columnNumbers.map((c) => west + c * step.lon),
     valuesM,
   };
+}
+
+/** Values of some columns of a row, at one go where they stand together (everywhere but across the seam). */
+async function readColumns(grid: GeoidGrid, row: number, columns: readonly number[]): Promise<(number | null)[]> {
+  const first = Math.min(...columns);
+  const last = Math.max(...columns);
+  const value = (v: number | undefined) => (v === undefined || Number.isNaN(v) ? null : v);
+  if (last - first === columns.length - 1) {
+    const block = await grid.readBlock(row, first, 1, columns.length);
+    return columns.map((c) => value(block[c - first]));
+  }
+  const values: (number | null)[] = [];
+  for (const c of columns) values.push(value((await grid.readBlock(row, c, 1, 1))[0]));
+  return values;
 }
 
 const range = (first: number, last: number): number[] => Array.from({ length: last - first + 1 }, (_, i) => first + i);

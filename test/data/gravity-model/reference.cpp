@@ -3,16 +3,16 @@
 //   reference values MODEL FOLDER DEGREE A F < points      lat lon h (degrees, metres) per line
 //     prints  W V gx gy gz  with 17 digits per line; g in local axes east, north, up
 //   reference time MODEL FOLDER DEGREE SECONDS
-//     prints  milliseconds per point of W with its gradient (GravityModel::W), and of the disturbing potential without
+//     prints  milliseconds of processor time per point of W with its gradient (GravityModel::W), and of the disturbing potential without
 //     (GravityModel::T), and of W on a circle of latitude (GravityCircle)
 // Debian package libgeographiclib-dev.
 #include <GeographicLib/Geocentric.hpp>
 #include <GeographicLib/GravityCircle.hpp>
 #include <GeographicLib/GravityModel.hpp>
-#include <chrono>
 #include <cmath>
 #include <cstdio>
 #include <cstdlib>
+#include <ctime>
 #include <string>
 
 using namespace GeographicLib;
@@ -20,14 +20,13 @@ using namespace GeographicLib;
 static double sink = 0;
 
 template <class F> double millisecondsPerCall(double seconds, F f) {
-  using clock = std::chrono::steady_clock;
   f(0);
   long calls = 0;
-  const auto start = clock::now();
+  const auto start = std::clock();  // processor time
   double elapsed = 0;
   do {
     for (int i = 0; i < 4; ++i) f(calls++);
-    elapsed = std::chrono::duration<double>(clock::now() - start).count();
+    elapsed = double(std::clock() - start) / CLOCKS_PER_SEC;
   } while (elapsed < seconds);
   return 1e3 * elapsed / calls;
 }
