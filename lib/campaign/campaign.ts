@@ -1,3 +1,5 @@
+import type { FlywheelNoise } from '../clocks/dead-time.js';
+import type { FibreNoise } from '../clocks/fibre-noise.js';
 import type { OceanLoadingConstituent } from '../earth/earth-tide/ocean-loading.js';
 import type { PolePosition } from '../earth/earth-tide/pole-tide.js';
 import type { Radians } from '../quantity/radians.js';
@@ -39,6 +41,8 @@ export interface Measured extends Remarks {
   readonly frame?: string;
   readonly epochYear?: number;
   readonly rateMPerS?: number;
+  /** source named at a value without uncertainty: of the error that b or k of a levelling line sizes, or of the line's k·d at dH */
+  readonly source?: string;
   /** the value as typed, for messages; null for a bare number */
   readonly text: string | null;
 }
@@ -187,10 +191,47 @@ interface Instrument extends Remarks {
   readonly cost: number | null;
 }
 
+/** An oscillator beside a clock that runs without gaps and carries its frequency while the clock does not run. */
+export interface Flywheel extends Remarks, FlywheelNoise {
+  /** length of the cycle at whose beginning a clock with a stated uptime runs, s; null where `available` says when it runs */
+  readonly cycleS: number | null;
+}
+
 export interface Clock extends Instrument {
   readonly site: string;
   readonly transition: string;
   readonly tie: readonly TieStep[];
+  readonly flywheel?: Flywheel;
+}
+
+/** The noise of a fibre, from which the phase noise of its link follows. */
+export interface LinkFibre extends Remarks, FibreNoise {
+  /** no length was stated: it is that of the geodesic between the sites */
+  readonly lengthIsGeodesic: boolean;
+}
+
+/** The two clocks of a link compared in one place: that of the clock that stays. */
+export interface SideBySide extends Remarks {
+  readonly when: 'before' | 'after';
+  /** offset of `to` seen from `from`, gravity's part left in; null where it is only planned */
+  readonly y: Measured | null;
+  /** time of data planned for it, s; null where y is stated */
+  readonly timeS: number | null;
+  /** height of the atoms of `to` over those of `from`, m */
+  readonly dH: Measured;
+  /** pieces of the travelling clock's systematic in that place; null: those of the clock */
+  readonly systematic: Instrument['systematic'] | null;
+  readonly startMs: number | null;
+  readonly endMs: number | null;
+}
+
+/** One clock of a link travels: its frequency is compared in one place before and after. */
+export interface TransportedClock extends Remarks {
+  /** id of the clock that travels: one end of the link */
+  readonly clock: string;
+  /** standard uncertainty of what setting it up anew changes, relative frequency: once in every place and time */
+  readonly reproducibility: number;
+  readonly sideBySide: readonly SideBySide[];
 }
 
 export interface Link extends Instrument {
@@ -201,6 +242,8 @@ export interface Link extends Instrument {
   readonly lengthM: number | null;
   /** unbroken stretches of the link */
   readonly segments: number;
+  readonly fibre?: LinkFibre;
+  readonly transported?: TransportedClock;
 }
 
 export interface Measurement extends Remarks {
@@ -217,6 +260,33 @@ export interface MeasurementCorrelation extends Remarks {
   /** measurement ids */
   readonly between: readonly [string, string];
   readonly rho: number;
+}
+
+/** What levelling and GNSS with a (quasi)geoid would do over any distance, for comparison with the clocks. */
+export interface ClassicalMethods extends Remarks {
+  readonly levelling: LevellingModel | null;
+  readonly gnss: GnssModel | null;
+}
+
+/** u = b·√(detour·d) ⊕ k·detour·d over the distance d. */
+export interface LevellingModel extends Remarks {
+  /** m^½ */
+  readonly bRootM: number;
+  /** m/m */
+  readonly k: number;
+  /** length of the line over the distance, ≥ 1 */
+  readonly detour: number;
+}
+
+/** u² = 2·(h² + geoid²·(1 − ρ(d))): heights independent, (quasi)geoid correlated over the distance d. */
+export interface GnssModel extends Remarks {
+  /** standard uncertainty of an ellipsoidal height, m */
+  readonly hM: number;
+  /** standard uncertainty of a (quasi)geoid height, m */
+  readonly geoidM: number;
+  /** ρ = exp(−d/L); null: `correlation` at any distance */
+  readonly correlationLengthM: number | null;
+  readonly correlation: number;
 }
 
 /** A validated campaign: everything in SI and radians, ids resolved, immutable. */
@@ -240,4 +310,5 @@ export interface Campaign extends Remarks {
   readonly links: readonly Link[];
   readonly measurements: readonly Measurement[];
   readonly correlations: readonly MeasurementCorrelation[];
+  readonly methods?: ClassicalMethods;
 }

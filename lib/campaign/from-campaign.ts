@@ -1,10 +1,14 @@
+import { FIBRE_CARRIER_HZ, FIBRE_GROUP_INDEX } from '../clocks/fibre-noise.js';
 import { degToRad, type Radians, radToDeg } from '../quantity/index.js';
 import type {
   Campaign,
+  ClassicalMethods,
   Clock,
   Datum,
   Determination,
+  Flywheel,
   Link,
+  LinkFibre,
   Measured,
   Measurement,
   Remarks,
@@ -13,6 +17,7 @@ import type {
   Stability,
   TimeInterval,
   Transition,
+  TransportedClock,
 } from './campaign.js';
 import { CampaignError, faultAt } from './fault.js';
 import type {
@@ -20,6 +25,7 @@ import type {
   correlation,
   datum,
   measurement,
+  methods,
   site,
   source,
   transition,
@@ -164,6 +170,74 @@ type Piece = NonNullable<ReadOf<typeof clock>['systematic']>[number];
 
 const withoutNoDof = ({ dof, ...p }: Clock['systematic'][number]): Piece => (dof === null ? p : { ...p, dof });
 
+const nonZero = <T extends { readonly [key: string]: number }>(terms: T): Partial<T> =>
+  Object.fromEntries(Object.entries(terms).filter(([, v]) => v !== 0)) as Partial<T>;
+
+const fromFlywheel = (f: Flywheel): NonNullable<ReadOf<typeof clock>['flywheel']> => ({
+  stability: nonZero({ white: f.white, flicker: f.flicker, randomWalk: f.randomWalk, phase: f.phase }),
+  ...nonZero({ driftPerDay: f.driftPerDay }),
+  ...(f.cycleS === null ? {} : { cycle: f.cycleS }),
+  ...remarksOf(f),
+});
+
+const fromFibre = (f: LinkFibre): NonNullable<ReadOf<typeof link>['fibre']> => ({
+  noise: perKm(f.noiseRad2HzPerM),
+  bandwidth: f.bandwidthHz,
+  ...(f.carrierHz === FIBRE_CARRIER_HZ ? {} : { carrier: f.carrierHz }),
+  ...(f.groupIndex === FIBRE_GROUP_INDEX ? {} : { groupIndex: f.groupIndex }),
+  ...remarksOf(f),
+});
+
+/** The number per km with the fewest digits that is this one per m. */
+function perKm(perM: number): number {
+  for (let digits = 1; digits < 17; digits++) {
+    const short = Number((1000 * perM).toPrecision(digits));
+    if (short / 1000 === perM) return short;
+  }
+  return 1000 * perM;
+}
+
+const fromTransported = (t: TransportedClock): NonNullable<ReadOf<typeof link>['transported']> => ({
+  clock: t.clock,
+  ...nonZero({ reproducibility: t.reproducibility }),
+  sideBySide: t.sideBySide.map((s) => ({
+    when: s.when,
+    ...told({ y: s.y, time: s.timeS }),
+    dH: s.dH,
+    ...(s.systematic === null ? {} : { systematic: s.systematic.map(withoutNoDof) }),
+    ...(s.startMs === null ? {} : { start: s.startMs }),
+    ...(s.endMs === null ? {} : { end: s.endMs }),
+    ...remarksOf(s),
+  })),
+  ...remarksOf(t),
+});
+
+const fromMethods = ({ levelling, gnss, ...m }: ClassicalMethods): ReadOf<typeof methods> => ({
+  ...(levelling
+    ? {
+        levelling: {
+          b: levelling.bRootM,
+          k: levelling.k,
+          ...(levelling.detour === 1 ? {} : { detour: levelling.detour }),
+          ...remarksOf(levelling),
+        },
+      }
+    : {}),
+  ...(gnss
+    ? {
+        gnss: {
+          h: gnss.hM,
+          geoid: gnss.geoidM,
+          ...(gnss.correlationLengthM === null
+            ? nonZero({ correlation: gnss.correlation })
+            : { correlationLength: gnss.correlationLengthM }),
+          ...remarksOf(gnss),
+        },
+      }
+    : {}),
+  ...remarksOf(m),
+});
+
 const fromClock = (c: Clock): ReadOf<typeof clock> => ({
   id: c.id,
   ...told({ name: c.name }),
@@ -171,6 +245,7 @@ const fromClock = (c: Clock): ReadOf<typeof clock> => ({
   transition: c.transition,
   ...(c.tie.length > 0 ? { tie: c.tie } : {}),
   ...fromInstrument(c),
+  ...(c.flywheel ? { flywheel: fromFlywheel(c.flywheel) } : {}),
 });
 
 const fromLink = (l: Link): ReadOf<typeof link> => ({
@@ -182,6 +257,8 @@ const fromLink = (l: Link): ReadOf<typeof link> => ({
   ...(l.lengthM === null ? {} : { length: l.lengthM }),
   ...(l.segments === 1 ? {} : { segments: l.segments }),
   ...fromInstrument(l),
+  ...(l.fibre ? { fibre: fromFibre(l.fibre) } : {}),
+  ...(l.transported ? { transported: fromTransported(l.transported) } : {}),
 });
 
 const withoutTide = (m: Measured): Measured => ({ ...m, tide: null });
@@ -224,6 +301,7 @@ export function fromCampaign(c: Campaign): ReadOf<typeof campaignSchema> {
       measurements: c.measurements.map(fromMeasurement),
       correlations: c.correlations.map(fromCorrelation),
     }),
+    ...(c.methods ? { methods: fromMethods(c.methods) } : {}),
     ...remarksOf(c),
   };
 }

@@ -2,6 +2,7 @@ import type { Campaign } from './campaign.js';
 import { CampaignError, type Warning } from './fault.js';
 import { parseJsonText } from './json-text.js';
 import { type JsonNode, JsonTextError, jsonTreeOf } from './json-tree.js';
+import { assumptions } from './read/assumptions.js';
 import { checkCampaign } from './read/checks.js';
 import { doubts } from './read/doubts.js';
 import { rootContext } from './read/node.js';
@@ -28,8 +29,10 @@ function read(text: string | null, tree: () => JsonNode): ReadCampaign {
   const reading = new Reading(text);
   try {
     const file = readTree(tree(), reading);
-    if (file !== undefined && !reading.hasFaults)
-      return { campaign: toCampaign(file), warnings: doubts(file, reading.uses) };
+    if (file !== undefined && !reading.hasFaults) {
+      const campaign = toCampaign(file);
+      return { campaign, warnings: [...doubts(file, reading.uses), ...assumptions(campaign)] };
+    }
   } catch (error) {
     if (error instanceof JsonTextError) {
       const { code, start, found, expected } = error.fault;

@@ -1,12 +1,17 @@
+import { FIBRE_CARRIER_HZ, FIBRE_GROUP_INDEX } from '../clocks/fibre-noise.js';
 import { intersectionOfIntervals, totalLengthS } from '../clocks/intervals.js';
+import { geodesicDistanceM } from '../earth/geodesic-distance.js';
 import { LOVE_NUMBERS } from '../earth/permanent-tide.js';
 import { degToRad } from '../quantity/index.js';
 import type {
   Campaign,
+  ClassicalMethods,
   Clock,
   Datum,
   Determination,
+  Flywheel,
   Link,
+  LinkFibre,
   Measurement,
   MeasurementCorrelation,
   Remarks,
@@ -15,12 +20,14 @@ import type {
   Stability,
   TimeInterval,
   Transition,
+  TransportedClock,
 } from './campaign.js';
 import type {
   campaignSchema,
   correlation,
   datum,
   measurement,
+  methods,
   site,
   source,
   transition,
@@ -148,17 +155,20 @@ function coveredShare(available: readonly TimeInterval[], window: TimeInterval |
 
 type InstrumentInFile = ReadOf<typeof clock> | ReadOf<typeof link>;
 
+const toPieces = (pieces: NonNullable<InstrumentInFile['systematic']>): Clock['systematic'] =>
+  pieces.map((p) => ({
+    ...remarksOf(p),
+    ...keep(p, 'name', 'u'),
+    source: p.source ?? null,
+    dof: p.dof ?? null,
+  }));
+
 function toInstrument(i: InstrumentInFile, window: TimeInterval | null) {
   const available = i.available?.map(toInterval) ?? null;
   return {
     ...remarksOf(i),
     ...keep(i, 'id', 'name'),
-    systematic: (i.systematic ?? []).map((p) => ({
-      ...remarksOf(p),
-      ...keep(p, 'name', 'u'),
-      source: p.source ?? null,
-      dof: p.dof ?? null,
-    })),
+    systematic: toPieces(i.systematic ?? []),
     stability: toStability(i.stability),
     uptime: available === null ? (i.uptime ?? 1) : coveredShare(available, window),
     available,
@@ -167,18 +177,89 @@ function toInstrument(i: InstrumentInFile, window: TimeInterval | null) {
   };
 }
 
+const toFlywheel = (f: NonNullable<ReadOf<typeof clock>['flywheel']>): Flywheel => ({
+  ...remarksOf(f),
+  white: f.stability.white ?? 0,
+  flicker: f.stability.flicker ?? 0,
+  randomWalk: f.stability.randomWalk ?? 0,
+  phase: f.stability.phase ?? 0,
+  driftPerDay: f.driftPerDay ?? 0,
+  cycleS: f.cycle ?? null,
+});
+
 const toClock = (c: ReadOf<typeof clock>, window: TimeInterval | null): Clock => ({
   ...toInstrument(c, window),
   ...keep(c, 'site', 'transition'),
   tie: (c.tie ?? []).map((step) => ({ ...remarksOf(step), ...keep(step, 'name', 'dH') })),
+  ...(c.flywheel === undefined ? {} : { flywheel: toFlywheel(c.flywheel) }),
 });
 
-const toLink = (l: ReadOf<typeof link>, window: TimeInterval | null): Link => ({
+/** 1 km in m: the fibre's noise is stated per km. */
+const KM = 1000;
+
+const toFibre = (
+  f: NonNullable<ReadOf<typeof link>['fibre']>,
+  lengthM: number | undefined,
+  geodesicM: () => number,
+): LinkFibre => ({
+  ...remarksOf(f),
+  lengthM: lengthM ?? geodesicM(),
+  lengthIsGeodesic: lengthM === undefined,
+  noiseRad2HzPerM: f.noise / KM,
+  bandwidthHz: f.bandwidth,
+  carrierHz: f.carrier ?? FIBRE_CARRIER_HZ,
+  groupIndex: f.groupIndex ?? FIBRE_GROUP_INDEX,
+});
+
+const toTransported = (t: NonNullable<ReadOf<typeof link>['transported']>): TransportedClock => ({
+  ...remarksOf(t),
+  clock: t.clock,
+  reproducibility: t.reproducibility ?? 0,
+  sideBySide: t.sideBySide.map((s) => ({
+    ...remarksOf(s),
+    when: s.when,
+    y: s.y ?? null,
+    timeS: s.time ?? null,
+    dH: s.dH,
+    systematic: s.systematic === undefined ? null : toPieces(s.systematic),
+    startMs: s.start ?? null,
+    endMs: s.end ?? null,
+  })),
+});
+
+const toLink = (
+  l: ReadOf<typeof link>,
+  window: TimeInterval | null,
+  geodesicM: (from: string, to: string) => number,
+): Link => ({
   ...toInstrument(l, window),
   ...keep(l, 'from', 'to'),
   kind: l.kind ?? null,
   lengthM: l.length ?? null,
   segments: l.segments ?? 1,
+  ...(l.fibre === undefined ? {} : { fibre: toFibre(l.fibre, l.length, () => geodesicM(l.from, l.to)) }),
+  ...(l.transported === undefined ? {} : { transported: toTransported(l.transported) }),
+});
+
+const toMethods = (m: ReadOf<typeof methods>): ClassicalMethods => ({
+  ...remarksOf(m),
+  levelling: m.levelling
+    ? {
+        ...remarksOf(m.levelling),
+        bRootM: m.levelling.b ?? 0,
+        k: m.levelling.k ?? 0,
+        detour: m.levelling.detour ?? 1,
+      }
+    : null,
+  gnss: m.gnss
+    ? {
+        ...remarksOf(m.gnss),
+        hM: m.gnss.h,
+        geoidM: m.gnss.geoid,
+        correlationLengthM: m.gnss.correlationLength ?? null,
+        correlation: m.gnss.correlation ?? 0,
+      }
+    : null,
 });
 
 const toMeasurement = (m: ReadOf<typeof measurement>): Measurement => ({
@@ -202,6 +283,12 @@ const toCorrelation = (c: ReadOf<typeof correlation>): MeasurementCorrelation =>
  *  the types have them. */
 export function toCampaign(file: ReadOf<typeof campaignSchema>): Campaign {
   const window = file.window ? toInterval(file.window) : null;
+  const sites = file.sites.map(toSite);
+  const siteOf = (clock: string) => {
+    const { site } = (file.clocks ?? []).find(({ id }) => id === clock)!;
+    return sites.find(({ id }) => id === site)!;
+  };
+  const geodesicM = (from: string, to: string) => geodesicDistanceM(siteOf(from), siteOf(to));
   return {
     ...remarksOf(file),
     ...keep(file, 'format', 'title'),
@@ -213,10 +300,11 @@ export function toCampaign(file: ReadOf<typeof campaignSchema>): Campaign {
     sources: (file.sources ?? []).map(toSource),
     datums: (file.datums ?? []).map(toDatum),
     transitions: (file.transitions ?? []).map(toTransition),
-    sites: file.sites.map(toSite),
+    sites,
     clocks: (file.clocks ?? []).map((c) => toClock(c, window)),
-    links: (file.links ?? []).map((l) => toLink(l, window)),
+    links: (file.links ?? []).map((l) => toLink(l, window, geodesicM)),
     measurements: (file.measurements ?? []).map(toMeasurement),
     correlations: (file.correlations ?? []).map(toCorrelation),
+    ...(file.methods === undefined ? {} : { methods: toMethods(file.methods) }),
   };
 }

@@ -66,6 +66,7 @@ function quantityOf(kind: QuantityKind, m: Measured): Json {
     ...(m.frame === undefined ? {} : { frame: m.frame }),
     ...(m.epochYear === undefined ? {} : { epoch: m.epochYear }),
     ...(m.rateMPerS === undefined ? {} : { rate: m.rateMPerS }),
+    ...(m.source === undefined ? {} : { source: m.source }),
     ...(m.note === undefined ? {} : { note: m.note }),
     ...(m.reference === undefined ? {} : { reference: m.reference }),
     ...(m.date === undefined ? {} : { date: m.date }),

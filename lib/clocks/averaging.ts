@@ -1,4 +1,5 @@
 import type { Clock, Link } from '../campaign/campaign.js';
+import { delayLimitedPhaseNoise } from './fibre-noise.js';
 
 /** Statistical noise of one comparison of two clocks over a link, as squares of Allan deviations at 1 s. */
 export interface ComparisonNoise {
@@ -10,12 +11,16 @@ export interface ComparisonNoise {
   readonly phase2: number;
 }
 
+/** White phase noise of a link as the Allan deviation at 1 s: stated, or from the noise of its fibre. */
+export const linkPhaseNoise = ({ fibre, stability }: Link): number =>
+  fibre ? delayLimitedPhaseNoise(fibre) : stability.phase;
+
 export function comparisonNoise(from: Clock, to: Clock, link: Link): ComparisonNoise {
   const all = [from, to, link].map((x) => x.stability);
   return {
     white2: all.reduce((s, x) => s + x.white ** 2, 0),
     flicker2: all.reduce((s, x) => s + x.flicker ** 2, 0),
-    phase2: link.segments * link.stability.phase ** 2,
+    phase2: link.segments * linkPhaseNoise(link) ** 2,
   };
 }
 

@@ -14,6 +14,7 @@ import {
   orthometricHeightFunction,
   potentialFunction,
 } from './determination-functions.js';
+import { levelledDifference } from './levelling-line.js';
 import type { DeterminationObservation, SiteInputs } from './model.js';
 import { atEstimates, type ModelFunction } from './model-function.js';
 import { placeOfSite, registerMeanGravityFactor, registerMeasured } from './site-inputs.js';
@@ -154,7 +155,7 @@ function determinationFunction(
       const other = context.siteIndex.get(d.site)!;
       const g = d.g ? [own('g', d.g)] : [context.siteInputs[siteIndex]!.g, context.siteInputs[other]!.g];
       const shift = tide.shiftOfLevelling(d.dH, `${path}.dH`, site.latitudeRad, campaign.sites[other]!.latitudeRad);
-      return levelledFunction(own('dH', d.dH), g, shift);
+      return levelledFunction(own('dH', levelledDifference(d)), g, shift);
     }
   }
 }

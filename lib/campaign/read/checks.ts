@@ -4,6 +4,7 @@ import { quoted } from '../json-text.js';
 import type { JsonNode } from '../json-tree.js';
 import type { campaignSchema, correlation, measurement, site, transition } from '../schema/campaign-schema.js';
 import type { ReadOf } from '../schema/descriptor.js';
+import type { clock, link } from '../schema/instruments.js';
 import type { Origin, Reading } from './reading.js';
 import { checkReferences, checkSources } from './references.js';
 
@@ -14,7 +15,12 @@ type Readable<T> = Partial<T>;
 export function checkCampaign(file: Readable<ReadOf<typeof campaignSchema>>, reading: Reading): void {
   checkReferences(reading);
   checkSources(file.sources ?? [], reading.uses);
-  for (const s of file.sites ?? []) checkHeights(s, reading);
+  for (const s of file.sites ?? []) {
+    checkHeights(s, reading);
+    checkLines(s, reading);
+  }
+  for (const c of file.clocks ?? []) checkFlywheel(c, reading);
+  for (const l of file.links ?? []) checkLink(l, reading);
   for (const t of file.transitions ?? []) checkTransition(t, reading);
   for (const m of file.measurements ?? []) checkMeasurement(m, reading);
   checkCorrelations(file.correlations ?? [], reading);
@@ -38,6 +44,70 @@ function checkHeights(s: Readable<ReadOf<typeof site>>, reading: Reading): void 
         '"h": the ellipsoidal height, here or at the site',
       );
   }
+}
+
+/** The uncertainty of a levelled dH is stated once: with the value, or by b and k of the line. */
+function checkLines(s: Readable<ReadOf<typeof site>>, reading: Reading): void {
+  for (const d of s.determinations ?? []) {
+    if (d.kind !== 'levelled-from' || d.length === undefined || !(d.dH?.u > 0)) continue;
+    if (d.b === undefined && d.k === undefined) continue;
+    const origin = reading.originOf(d);
+    const dH = member(origin, 'dH');
+    reading.add(
+      'u-twice',
+      `${origin.context.path}.dH`,
+      dH,
+      reading.show(dH),
+      'the uncertainty once: here, or by "b" and "k" of the line',
+    );
+  }
+}
+
+/** A flywheel bridges gaps: when the clock runs has to be known. */
+function checkFlywheel(c: Readable<ReadOf<typeof clock>>, reading: Reading): void {
+  if (c.flywheel === undefined) return;
+  const { context, node } = reading.originOf(c.flywheel);
+  if (c.available === undefined && c.flywheel.cycle === undefined)
+    reading.add(
+      'missing-key',
+      `${context.path}.cycle`,
+      node,
+      'nothing',
+      '"cycle": the clock runs for its uptime at the beginning of each; or "available" intervals of the clock. What a flywheel adds depends on where the gaps lie',
+    );
+  else if (c.available !== undefined && c.flywheel.cycle !== undefined)
+    reading.add(
+      'exclusive-keys',
+      `${context.path}.cycle`,
+      member({ context, node }, 'cycle'),
+      '"cycle" and "available" of the clock',
+      'one of them',
+    );
+}
+
+function checkLink(l: Readable<ReadOf<typeof link>>, reading: Reading): void {
+  if (l.fibre !== undefined && l.stability?.phase !== undefined) {
+    const { context, node } = reading.originOf(l.stability);
+    reading.add(
+      'exclusive-keys',
+      `${context.path}.phase`,
+      member({ context, node }, 'phase'),
+      '"phase" beside "fibre"',
+      'the phase noise once: as measured, or from the noise of the fibre',
+    );
+  }
+  const travels = l.transported?.clock;
+  if (travels === undefined || l.from === undefined || l.to === undefined || travels === l.from || travels === l.to)
+    return;
+  const { context, node } = reading.originOf(l.transported!);
+  const at = member({ context, node }, 'clock');
+  reading.add(
+    'not-one-of',
+    `${context.path}.clock`,
+    at,
+    reading.show(at),
+    `one end of the link: ${quoted(l.from)} or ${quoted(l.to)}`,
+  );
 }
 
 function checkTransition(t: Readable<ReadOf<typeof transition>>, reading: Reading): void {

@@ -31,9 +31,15 @@ export function readQuantity(descriptor: QuantityDescriptor, node: JsonNode, con
   const read = readMeasured(plain(node, READ_TOGETHER), descriptor.kind);
   if (!read.ok) return refuseAll(read.problems, node, context);
   const { value } = read;
+  if (descriptor.sizesError && value.u > 0)
+    return context.refuse(node, 'uncertainty-not-expected', 'a number without an uncertainty: it is one itself');
   if (!inRange(value.value, descriptor, node, context)) return undefined;
   const text = textWithUnit(value, descriptor, node);
-  return { ...value, text, parts: withRemarks(value.parts, descriptor, node), tide: null, ...extras };
+  const parts = withRemarks(value.parts, descriptor, node);
+  const { source, ...others } = extras;
+  // an exact value has no piece that could carry the source: it is kept beside
+  const kept = source !== undefined && parts.length === 0 ? { source } : {};
+  return { ...value, text, parts, tide: null, ...others, ...kept };
 }
 
 /** The value as typed, with the unit that stood beside it: "43.812" alone would be shown as metres. */
@@ -84,14 +90,10 @@ export function readPieces<P extends ObjectDescriptor<Keys>>(
   }
   const pieces: Piece[] = [];
   const firstWith = new Map<string, number>();
-  let good = true;
   for (const [i, item] of node.items.entries()) {
     const at = context.item(i);
     const read = context.read(piece, item, at) as ReadOf<P> | undefined;
-    if (read === undefined) {
-      good = false;
-      continue;
-    }
+    if (read === undefined) continue;
     const p = whole(read);
     const first = p.source === null ? undefined : firstWith.get(p.source);
     if (p.source !== null && first !== undefined) {
@@ -101,15 +103,16 @@ export function readPieces<P extends ObjectDescriptor<Keys>>(
         'source-twice',
         `each source once: piece ${first} names it too, and pieces are independent of each other`,
       );
-      good = false;
     }
     if (p.source !== null) firstWith.set(p.source, i);
     if (p.u > 0) pieces.push(p);
   }
-  return good ? pieces : undefined;
+  return pieces;
 }
 
-type Extras = Partial<Pick<Measured, 'tide' | 'frame' | 'epochYear' | 'rateMPerS' | 'note' | 'reference' | 'date'>>;
+type Extras = Partial<
+  Pick<Measured, 'tide' | 'frame' | 'epochYear' | 'rateMPerS' | 'source' | 'note' | 'reference' | 'date'>
+>;
 
 const NO_EXTRAS: Extras = {};
 
@@ -124,8 +127,10 @@ function readExtras(descriptor: QuantityDescriptor, node: JsonObject, context: C
   const extras: Record<string, unknown> = {};
   for (const [key, { value }] of own) {
     const at = context.member(key);
-    if (key === 'source') noteSource(value, at);
-    else if (key === 'parts' && value.type === 'array') good = checkParts(value.items, at) && good;
+    if (key === 'source') {
+      noteSource(value, at);
+      if (value.type === 'string') extras['source'] = value.value;
+    } else if (key === 'parts' && value.type === 'array') good = checkParts(value.items, at) && good;
     else if (!READ_TOGETHER.has(key)) {
       const read = context.read(keys[key]!.descriptor, value, at);
       if (read === undefined) good = false;

@@ -157,6 +157,49 @@ export const correlation = object('correlation', 'Correlation of the statistical
   rho: required(scalar('fraction', { min: -1, max: 1 }), 'Correlation ρ', '−1 to 1.'),
 });
 
+export const methods = object(
+  'methods',
+  'What levelling and GNSS would do over any distance, to compare the clocks with.',
+  {
+    levelling: optional(
+      object('levelling model', 'u = b·√d ⊕ k·d over a line of length d.', {
+        b: optional(scalar('root-length', { min: 0 }), 'Random error b', 'mm/√km. Default: 0.'),
+        k: optional(scalar('length-ratio', { min: 0 }), 'Systematic error k', 'mm/km. Default: 0.'),
+        detour: optional(
+          number({ min: 1, max: 10 }),
+          'Detour',
+          'Length of the levelling line over the geodesic. Default: 1.',
+        ),
+      }),
+      'Levelling',
+      'Default: b and k of the levelled-from lines of this file.',
+    ),
+    gnss: optional(
+      object(
+        'GNSS model',
+        'u² = 2·(h² + geoid²·(1 − ρ)).',
+        {
+          h: required(scalar('length', { min: 0 }), 'u of h', 'Standard uncertainty of an ellipsoidal height, m.'),
+          geoid: required(
+            scalar('length', { min: 0 }),
+            'u of ζ or N',
+            'Standard uncertainty of a (quasi)geoid height, m.',
+          ),
+          correlationLength: optional(scalar('length', { above: 0 }), 'Correlation length L', 'ρ = exp(−d/L), m.'),
+          correlation: optional(
+            scalar('fraction', { min: -1, max: 1 }),
+            'Correlation ρ',
+            'ρ at any distance. Default: 0.',
+          ),
+        },
+        { exclusive: [['correlation', 'correlationLength']] },
+      ),
+      'GNSS and geoid',
+      'Default: what the gnss determinations of this file state.',
+    ),
+  },
+);
+
 const tide = oneOf('mean', 'zero', 'free');
 
 /** The whole file. Validation, the JSON Schema and the forms of the desk all come from this one description. */
@@ -187,4 +230,5 @@ export const campaignSchema = object('campaign', 'A comparison of heights by clo
   links: optional(list(link, { pathBy: 'id' }), 'Links', 'Frequency links between the clocks.'),
   measurements: optional(list(measurement), 'Measurements', 'Measured offsets of the links.'),
   correlations: optional(list(correlation), 'Correlations', 'Between the statistical parts of measurements.'),
+  methods: optional(methods, 'Classical methods', 'What the clocks are compared with in break-even.'),
 });

@@ -80,6 +80,8 @@ export interface QuantityDescriptor extends Reads<Measured>, Range {
   readonly frame: boolean;
   /** whether a grid file may stand in place of the value */
   readonly grid: boolean;
+  /** the value is itself a standard uncertainty: it has none of its own, and its source is that of the error it sizes */
+  readonly sizesError: boolean;
 }
 
 /** Pieces of one standard uncertainty: one number, one piece, or a list of pieces. Those with u = 0 are left out. */
@@ -200,8 +202,16 @@ export const scalar = (kind: QuantityKind, more: Range & { bare?: boolean } = {}
 });
 export const quantity = (
   kind: QuantityKind,
-  more: Range & { tide?: boolean; frame?: boolean; grid?: boolean } = {},
-): QuantityDescriptor => ({ type: 'quantity', kind, tide: false, frame: false, grid: false, ...more });
+  more: Range & { tide?: boolean; frame?: boolean; grid?: boolean; sizesError?: boolean } = {},
+): QuantityDescriptor => ({
+  type: 'quantity',
+  kind,
+  tide: false,
+  frame: false,
+  grid: false,
+  sizesError: false,
+  ...more,
+});
 export const pieces = <P extends ObjectDescriptor<Keys>>(single: ScalarDescriptor, piece: P): PiecesDescriptor<P> => ({
   type: 'pieces',
   single,

@@ -102,14 +102,14 @@ export const determination = variant('determination', 'Kind', 'How the gravity p
       ),
       length: optional(scalar('length', { above: 0 }), 'Length of the line', 'Levelled distance, m.'),
       b: optional(
-        quantity('root-length', { min: 0 }),
+        quantity('root-length', { min: 0, sizesError: true }),
         'Random error b',
-        'Standard uncertainty of the line per root of its length, mm/√km.',
+        'Standard uncertainty of the line per root of its length, mm/√km: with k it makes u(dH) = b·√length ⊕ k·length.',
       ),
       k: optional(
-        quantity('length-ratio', { min: 0 }),
+        quantity('length-ratio', { min: 0, sizesError: true }),
         'Systematic error k',
-        'Standard uncertainty of the line in proportion to its length, mm/km.',
+        'Standard uncertainty of the line in proportion to its length, mm/km. Its source makes it common to lines.',
       ),
     },
     {

@@ -1,11 +1,13 @@
+import { FIBRE_CARRIER_HZ, FIBRE_GROUP_INDEX } from '../../clocks/fibre-noise.js';
 import { RECOMMENDED_FREQUENCIES } from '../../clocks/recommended-frequencies.js';
-import { candidate, name, SMALL_DEVIATION, systematicPiece } from './common.js';
+import { candidate, name, SMALL_DEVIATION, SMALL_FRACTION, systematicPiece } from './common.js';
 import {
   id,
   instant,
   list,
   number,
   object,
+  oneOf,
   optional,
   pieces,
   quantity,
@@ -78,6 +80,41 @@ const available = optional(
   'Measured intervals of good data, in place of uptime.',
 );
 
+const flywheel = object(
+  'flywheel',
+  'An oscillator beside the clock that runs without gaps and bridges those of the clock.',
+  {
+    stability: required(
+      object('flywheel stability', 'Allan deviations of a flywheel.', {
+        white,
+        flicker,
+        randomWalk: optional(
+          scalar('fraction', SMALL_DEVIATION),
+          'Random walk',
+          'Allan deviation at 1 s of the random-walk frequency noise, rising as τ^(1/2). Default: 0.',
+        ),
+        phase: optional(
+          scalar('fraction', SMALL_DEVIATION),
+          'White phase noise',
+          'Allan deviation at 1 s, falling as 1/τ, of the flywheel and of its comparison with the clock. Default: 0.',
+        ),
+      }),
+      'Stability',
+      'Noise of the flywheel.',
+    ),
+    driftPerDay: optional(
+      scalar('fraction', SMALL_DEVIATION),
+      'Drift per day',
+      'Standard uncertainty of its linear frequency drift after correction, per day. Default: 0.',
+    ),
+    cycle: optional(
+      scalar('duration', { min: 3600 }),
+      'Cycle',
+      'Length of the cycle at whose beginning the clock runs for its uptime, 1 h or more. Not beside available intervals of the clock.',
+    ),
+  },
+);
+
 export const clock = object(
   'clock',
   'A clock, standing at a site.',
@@ -111,9 +148,78 @@ export const clock = object(
     stability: optional(clockStability, 'Stability', 'Allan deviations. Default: 0.'),
     uptime,
     available,
+    flywheel: optional(
+      flywheel,
+      'Flywheel',
+      'Oscillator that bridges the gaps of the clock; plan then says what bridging brings and costs. Default: none.',
+    ),
     ...candidate,
   },
   { atSite: true, exclusive: [['uptime', 'available']] },
+);
+
+const fibre = object('fibre', 'Noise of the fibre, from which the phase noise of its stabilised link follows.', {
+  noise: required(
+    number({ above: 0 }),
+    'Fibre noise',
+    'Phase noise of the fibre without stabilisation, S(f)·f² per length, rad²·Hz/km: S falls as 1/f².',
+  ),
+  bandwidth: required(
+    scalar('frequency', { above: 0 }),
+    'Bandwidth',
+    'Bandwidth in which the phase is read: that of counter or filter, at most c/(4·n·length) of the servo, Hz.',
+  ),
+  carrier: optional(
+    scalar('frequency', { above: 0 }),
+    'Carrier',
+    `Optical frequency in the fibre. Default: ${FIBRE_CARRIER_HZ / 1e12} THz.`,
+  ),
+  groupIndex: optional(number({ min: 1, max: 3 }), 'Group index', `Default: ${FIBRE_GROUP_INDEX}.`),
+});
+
+const sideBySide = object(
+  'side-by-side',
+  'The two clocks of the link compared in one place: that of the clock that stays.',
+  {
+    when: required(oneOf('before', 'after'), 'When', 'Before the journey or after it.'),
+    y: optional(
+      quantity('fraction', SMALL_FRACTION),
+      'Offset y',
+      'Offset of clock B (to) seen from clock A (from), gravity’s part left in; its u is statistics alone. Not measured yet: time.',
+    ),
+    time: optional(
+      scalar('duration', { above: 0 }),
+      'Time',
+      'Time of data that is planned for it, where y is not there yet.',
+    ),
+    dH: required(
+      quantity('length'),
+      'Height difference dH',
+      'Height of the atoms of clock B (to) over those of clock A (from), m.',
+    ),
+    systematic: optional(
+      pieces(scalar('fraction', SMALL_DEVIATION), systematicPiece),
+      'Systematic uncertainty',
+      'Pieces of the travelling clock’s systematic in that place. Default: those of the clock. A piece cancels against the remote one if both name the same source.',
+    ),
+    start: optional(instant(), 'Start', 'Beginning, ISO 8601 in UTC or MJD.'),
+    end: optional(instant(), 'End', 'End, ISO 8601 in UTC or MJD.'),
+  },
+  { ordered: [['start', 'end']], exclusive: [['y', 'time']] },
+);
+
+const transported = object(
+  'transported',
+  'One clock of the link travels and is compared with the other in one place.',
+  {
+    clock: required(reference('clocks'), 'Clock', 'The end of the link that travels.'),
+    reproducibility: optional(
+      scalar('fraction', SMALL_DEVIATION),
+      'Reproducibility',
+      'Standard uncertainty of what setting the clock up anew changes: once for every place and time. Default: 0.',
+    ),
+    sideBySide: required(list(sideBySide, { min: 1 }), 'Side by side', 'Comparisons in one place, before and after.'),
+  },
 );
 
 export const link = object(
@@ -139,6 +245,16 @@ export const link = object(
     stability: optional(linkStability, 'Stability', 'Allan deviations. Default: 0.'),
     uptime,
     available,
+    fibre: optional(
+      fibre,
+      'Fibre',
+      'Noise of the fibre, from which the phase noise follows, in place of stability.phase. Without a length the geodesic is taken, with a warning.',
+    ),
+    transported: optional(
+      transported,
+      'Transported clock',
+      'Comparisons in one place before and after. Default: none.',
+    ),
     ...candidate,
   },
   { exclusive: [['uptime', 'available']], distinct: [['from', 'to']] },

@@ -156,8 +156,8 @@ const example = (kind: QuantityKind): string => {
   return unit === '1' ? name : `${name}; default unit ${unit}`;
 };
 
-const nameOfQuantity = ({ kind, tide, frame, grid }: QuantityDescriptor, key: string): string =>
-  `quantity ${[kind, tide ? 'with tide' : '', frame || grid ? key : ''].filter(Boolean).join(' ')}`;
+const nameOfQuantity = ({ kind, tide, frame, grid, sizesError }: QuantityDescriptor, key: string): string =>
+  `quantity ${[kind, tide ? 'with tide' : '', sizesError ? 'of an error' : '', frame || grid ? key : ''].filter(Boolean).join(' ')}`;
 
 const quantitySchema = (descriptor: QuantityDescriptor, key: string, definitions: Definitions): JsonSchema => ({
   description: `A measured quantity: ${example(descriptor.kind)}. Text: ${JSON.stringify(KINDS[descriptor.kind].example)}.`,
@@ -167,7 +167,7 @@ const quantitySchema = (descriptor: QuantityDescriptor, key: string, definitions
     {
       type: 'object',
       ...membersSchema(key, quantityKeys(descriptor), definitions),
-      not: { required: ['source', 'parts'] },
+      ...(descriptor.sizesError ? {} : { not: { required: ['source', 'parts'] } }),
     },
   ],
 });

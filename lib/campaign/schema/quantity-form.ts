@@ -46,6 +46,7 @@ const made = new WeakMap<QuantityDescriptor, Keys>();
 
 function makeQuantityKeys(descriptor: QuantityDescriptor): Keys {
   const { kind } = descriptor;
+  if (descriptor.sizesError) return { ...scalarKeys(scalar(kind)), source };
   const uncertainty = scalar(kind, { min: 0, uncertainty: true, bare: true });
   return {
     value: required(

@@ -24,10 +24,16 @@ export const EVERYTHING = `{
   "clocks": [
     { "id": "k", "site": "a", "transition": "87Sr", "tie": [{ "name": "up", "dH": "1.2(1) m", "note": "n7" }, { "dH": -2 }],
       "systematic": [{ "u": "1.2e-18", "source": "u", "dof": 7, "name": "bbr", "note": "n8" }, { "u": 0 }, { "u": 3e-19 }],
-      "stability": { "white": 2e-16, "note": "n9" }, "available": [{ "start": 61530, "end": "2027-05-09T12:00:00+02:00" }, { "start": 61528, "end": 61529.25 }] },
-    { "id": "l", "site": "b", "transition": "x", "systematic": { "u": "2e-18", "source": "u" }, "stability": {}, "uptime": 0 }],
+      "stability": { "white": 2e-16, "note": "n9" }, "available": [{ "start": 61530, "end": "2027-05-09T12:00:00+02:00" }, { "start": 61528, "end": "61529.25" }] },
+    { "id": "l", "site": "b", "transition": "x", "systematic": { "u": "2e-18", "source": "u" }, "stability": {}, "uptime": 0,
+      "flywheel": { "stability": { "white": 1e-13, "flicker": "2e-15", "randomWalk": 1e-19, "phase": 2e-13, "note": "n9" }, "driftPerDay": 1e-17, "cycle": "1 d" } }],
   "links": [{ "id": "kl", "name": "KL", "from": "k", "to": "l", "kind": "own word", "length": 0, "segments": 3, "systematic": "3e-19",
-    "stability": { "white": 0, "flicker": "1e-20", "phase": "1e-15" }, "uptime": { "value": 0.5 } }],
+    "stability": { "white": 0, "flicker": "1e-20", "phase": "1e-15" }, "uptime": { "value": 0.5 } },
+    { "id": "lk", "from": "l", "to": "k", "kind": "transported", "fibre": { "noise": 13.7, "bandwidth": "10 Hz", "carrier": "195 THz", "groupIndex": 1.45 },
+      "transported": { "clock": "l", "reproducibility": "2e-18", "reference": "r1", "sideBySide": [
+        { "when": "before", "y": "1.2(3)e-17", "dH": "0.42(1) m", "systematic": [{ "u": 1e-18, "source": "u" }], "start": 61520, "end": 61521 },
+        { "when": "after", "time": "2 d", "dH": 0.4 }] } }],
+  "methods": { "levelling": { "b": "1.5 mm/√km", "k": "0.1 mm/km", "detour": 1.3, "note": "r2" }, "gnss": { "h": "7 mm", "geoid": 0.017, "correlationLength": "60 km" } },
   "measurements": [{ "id": "m", "link": "kl", "y": { "value": "2.1(2)e-14", "tide": "zero" }, "start": 61528, "end": 61530, "note": "n10" },
     { "id": "n", "link": "kl", "y": "2.2(2)e-14", "tide": "free", "includesSystematic": true, "use": "check" }, { "link": "kl", "y": 2e-14 }],
   "correlations": [{ "between": ["m", "n"], "rho": -0.41, "note": "n11" }]
