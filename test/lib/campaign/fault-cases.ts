@@ -317,6 +317,14 @@ export const CASES: readonly Case[] = [
   },
   { code: 'not-built', path: 'sites.a.h.frame', at: '"frame"', change: h('{ "value": 143.2, "frame": "ITRF2020" }') },
   {
+    // the near match, epoch, is not offered while it would be refused
+    code: 'unknown-key',
+    path: 'sites.a.h.epoc',
+    at: '"epoc"',
+    change: h('{ "value": 143.2, "epoc": 2020 }'),
+    expected: 'one of "value"',
+  },
+  {
     code: 'unknown-key',
     path: 'sites.a.h.sorce',
     at: '"sorce"',
@@ -475,7 +483,7 @@ export const CASES: readonly Case[] = [
     code: 'missing-key',
     path: 'sites.b.determinations.0.length',
     at: '{ "kind"',
-    change: { b: PARTS.b.replace('"dH"', '"b": "1 mm/√km", "dH"') },
+    change: { b: PARTS.b.replace('"dH": "5(1) m"', '"b": "1 mm/√km", "dH": "5 m"') },
     expected: '"length" beside "b"',
   },
   {

@@ -174,9 +174,10 @@ describe('doubts', () => {
       ['unused-source', 'sources.1'],
       ['link-kind', 'links.kl.kind'],
     ]);
-    expect(readCampaign(file({ link: link.replace('fiber', 'microwave') })).warnings.map((w) => w.code)).toEqual([
-      'unused-source',
-    ]);
+    for (const kind of ['microwave', 'fibre'])
+      expect(readCampaign(file({ link: link.replace('fiber', kind) })).warnings.map((w) => w.code)).toEqual([
+        'unused-source',
+      ]);
   });
 });
 
