@@ -2,12 +2,12 @@ import type { BudgetRow, LinkPrediction, Prediction } from '../answers/predictio
 import type { Campaign, Site } from '../campaign/campaign.js';
 import { formatLength } from '../quantity/index.js';
 import { BUDGET_TITLE, budgetCells, budgetColumns, restCells, SHARE_NOTE } from './budget-table.js';
+import { checksTable } from './checks-table.js';
 import { LENGTH_NOTE, referencePotentialNote, SIGN_NOTE, tideNote } from './conventions.js';
 import { limitSentence } from './limit.js';
 import { decimalCell, estimateCell, HERTZ, METRES, OFFSET, POTENTIAL, sizeText } from './numbers.js';
 import {
   estimateColumn,
-  none,
   notComputed,
   numberColumn,
   type Report,
@@ -41,7 +41,7 @@ export function predictionReport(prediction: Prediction, campaign: Campaign, opt
     budgetTable(prediction, options),
     sitesTable(prediction, campaign),
     determinationsTable(prediction),
-    checksTable(prediction),
+    checksTable(prediction.checks),
     clocksTable(prediction),
     correlationsTable(prediction, options.full),
   ].filter((table): table is Table => table !== null && table.rows.length > 0);
@@ -178,20 +178,6 @@ function determinationsTable({ sites }: Prediction): Table | null {
       ]),
     ),
     notes: [],
-  };
-}
-
-function checksTable({ checks }: Prediction): Table {
-  return {
-    id: 'checks',
-    title: 'Checks: compared with the result, not used for it',
-    columns: [textColumn('what'), estimateColumn('residual', POTENTIAL.unit), numberColumn('z', null)],
-    rows: checks.map(({ path, residual, z }) => [
-      textCell(path),
-      estimateCell(residual, POTENTIAL, 'signed'),
-      z === null ? none : decimalCell(z, 2, 'signed'),
-    ]),
-    notes: ['residual = the determination alone minus the combined result; z = residual/u.'],
   };
 }
 

@@ -2,6 +2,7 @@ import type { Command } from '../command.js';
 import { adjust } from './adjust.js';
 import { check } from './check.js';
 import { design } from './design.js';
+import { evaluate } from './evaluate.js';
 import { floors } from './floors.js';
 import { grid } from './grid.js';
 import { newCampaign } from './new.js';
@@ -10,4 +11,15 @@ import { predict } from './predict.js';
 import { tide } from './tide.js';
 
 /** Every command, in the order of the help. */
-export const commands: readonly Command[] = [floors, pair, newCampaign, check, predict, adjust, design, tide, grid];
+export const commands: readonly Command[] = [
+  floors,
+  pair,
+  newCampaign,
+  check,
+  predict,
+  evaluate,
+  adjust,
+  design,
+  tide,
+  grid,
+];
