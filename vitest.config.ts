@@ -6,7 +6,7 @@ const { version } = JSON.parse(readFileSync(new URL('package.json', import.meta.
 export default defineConfig({
   define: { __PLUMBTICK_VERSION__: JSON.stringify(version) },
   test: {
-    include: ['test/{lib,published,cli}/**/*.test.ts'],
+    include: ['test/{lib,published,cli,pages}/**/*.test.ts'],
     testTimeout: 60_000,
     coverage: { provider: 'v8', include: ['lib/**/*.ts'] },
   },

@@ -69,7 +69,9 @@ function files(folder) {
   });
 }
 
-export async function build({ types = false, dist = path.join(root, 'dist') } = {}) {
+const ownFolder = path.join(root, 'dist');
+
+export async function build({ types = false, dist = ownFolder } = {}) {
   const results = await Promise.all([
     esbuild.build({
       ...common,
@@ -107,7 +109,8 @@ export async function build({ types = false, dist = path.join(root, 'dist') } = 
   put(path.join(dist, 'plumbtick-campaign.schema.json'), `${JSON.stringify(campaignJsonSchema(), null, 2)}\n`);
 
   const declarations = path.join(dist, 'types');
-  for (const file of files(dist))
+  // what an earlier build left; never in a folder that may hold something else
+  for (const file of dist === ownFolder ? files(dist) : [])
     if (!written.has(file) && !file.startsWith(declarations) && !file.endsWith('.tmp'))
       fs.rmSync(file, { force: true });
   if (types) {
