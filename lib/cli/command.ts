@@ -14,6 +14,8 @@ export interface Call {
   readonly file: { readonly name: string; readonly text: string } | null;
   /** Name of the file as given, where the command reads it itself (`takesFile: 'data'`) too; null without one */
   readonly fileName: string | null;
+  /** The second file of a command that takes two */
+  readonly second: { readonly name: string; readonly text: string } | null;
   /** Value of an option, null if it was not given */
   option(name: string): string | null;
   /** All values of a repeatable option, in order */
@@ -53,6 +55,8 @@ export interface Command {
   readonly examples: readonly string[];
   /** `data`: a file that is no campaign, which the command opens itself */
   readonly takesFile: boolean | 'data';
+  /** a second file is wanted: what it is */
+  readonly secondFile?: string;
   readonly options: Readonly<Record<string, OptionSpec>>;
   run(call: Call): Answer | PlainText | Promise<Answer | PlainText>;
 }

@@ -57,7 +57,9 @@ export async function main(words: readonly string[]): Promise<Status> {
     const name = fileOf(command, parsed);
     fileName = name ?? '';
     const text = name === null || command.takesFile === 'data' ? null : await readFileText(name);
-    const call = callOf(parsed, name, name === null || text === null ? null : { name, text });
+    const secondName = command.secondFile === undefined ? null : parsed.positionals[1]!;
+    const second = secondName === null ? null : { name: secondName, text: await readFileText(secondName) };
+    const call = callOf(parsed, name, name === null || text === null ? null : { name, text }, second);
     return print(await command.run(call), form, parsed.values.get('table')?.[0] ?? null);
   } catch (error) {
     if (error instanceof UsageError) {
@@ -119,15 +121,24 @@ function fileOf(command: Command, { positionals }: ParsedWords): string | null {
     );
   if (command.takesFile && name === undefined)
     throw new UsageError(`${command.name} needs a file: plumbtick ${command.name} FILE (or - for standard input)`);
-  if (more.length > 0)
+  const wanted = command.secondFile === undefined ? 1 : 2;
+  if (wanted === 2 && more.length === 0)
+    throw new UsageError(`${command.name} needs two files: plumbtick ${command.name} ${command.synopsis}`);
+  if (more.length >= wanted)
     throw new UsageError(
-      `${command.name} takes one file, but was given ${positionals.length}: ${positionals.join(', ')}`,
+      `${command.name} takes ${wanted === 1 ? 'one file' : 'two files'}, but was given ${positionals.length}: ${positionals.join(', ')}`,
     );
   return name ?? null;
 }
 
-const callOf = ({ values }: ParsedWords, fileName: string | null, file: Call['file']): Call => ({
+const callOf = (
+  { values }: ParsedWords,
+  fileName: string | null,
+  file: Call['file'],
+  second: Call['second'],
+): Call => ({
   file,
+  second,
   fileName,
   option: (name) => values.get(name)?.[0] ?? null,
   values: (name) => values.get(name) ?? [],

@@ -1,6 +1,8 @@
 import type { Command } from '../command.js';
 import { adjust } from './adjust.js';
 import { check } from './check.js';
+import { cite } from './cite.js';
+import { compare } from './compare.js';
 import { design } from './design.js';
 import { evaluate } from './evaluate.js';
 import { floors } from './floors.js';
@@ -8,6 +10,7 @@ import { grid } from './grid.js';
 import { newCampaign } from './new.js';
 import { pair } from './pair.js';
 import { predict } from './predict.js';
+import { series } from './series.js';
 import { tide } from './tide.js';
 
 /** Every command, in the order of the help. */
@@ -18,8 +21,11 @@ export const commands: readonly Command[] = [
   check,
   predict,
   evaluate,
+  compare,
+  cite,
   adjust,
   design,
+  series,
   tide,
   grid,
 ];
