@@ -6,15 +6,7 @@ import { checksTable } from './checks-table.js';
 import { LENGTH_NOTE, referencePotentialNote, SIGN_NOTE, tideNote } from './conventions.js';
 import { limitSentence } from './limit.js';
 import { decimalCell, estimateCell, HERTZ, METRES, OFFSET, POTENTIAL, sizeText } from './numbers.js';
-import {
-  estimateColumn,
-  notComputed,
-  numberColumn,
-  type Report,
-  type Table,
-  textCell,
-  textColumn,
-} from './table.js';
+import { estimateColumn, notComputed, numberColumn, type Report, type Table, textCell, textColumn } from './table.js';
 
 export interface PredictionReportOptions {
   /** heading where the campaign has no title */
