@@ -38,6 +38,7 @@ export const totalSpanS = (spans: readonly Span[]): number =>
  *  white FM −σ²|τ|/2, flicker FM σ²τ²·ln|τ|/(4·ln 2), random walk FM σ²|τ|³/4. The factors are those that give the Allan
  *  variance for its own weights (Riley 2008, NIST SP 1065, section 3.2). White phase noise is independent from reading to
  *  reading, with σ_x² = σ_y²(1 s)·(1 s)²/3.
+ *  Rounding: some 1e-14 of the Allan variance at the whole span, which matters only where next to nothing is left.
  * @param readings in any order; equal times are joined
  * @returns dimensionless, ≥ 0 */
 export function varianceOfReadings(readings: readonly PhaseReading[], noise: OscillatorNoise): number {
