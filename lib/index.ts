@@ -11,11 +11,24 @@ export {
 export { type PairAnswer, type PairInput, pair } from './answers/pair.js';
 export { predict } from './answers/predict.js';
 export type * from './answers/prediction.js';
+export { analyseSeries, type SeriesAnswer, type SeriesDeviation, type SeriesQuestion } from './answers/series.js';
 export { type LinkTide, TIDE_STEP_S, type TideAnswer, type TideLeft, tide } from './answers/tide.js';
 export type * from './campaign/campaign.js';
 export { CampaignError, type Fault, type Warning } from './campaign/fault.js';
 export { type ReadCampaign, readCampaign, readCampaignValue } from './campaign/read.js';
 export { campaignJsonSchema, type JsonSchema } from './campaign/schema/index.js';
+export {
+  DEVIATION_KINDS,
+  type Deviation,
+  type DeviationKind,
+  deviationsAt,
+  octaveFactors,
+  phaseRecordOf,
+} from './clocks/deviations/index.js';
+export { type MeanUncertainty, meanUncertainty } from './clocks/mean-uncertainty.js';
+export { identifyNoise, type NoiseIdentification } from './clocks/noise-identification.js';
+export { type Reduction, type ReductionOptions, reduceSeries } from './clocks/reduction.js';
+export * from './clocks/series/index.js';
 export { version } from './constants/version.js';
 export { type ByteSource, bytesSource } from './earth/file-bytes/byte-source.js';
 export * from './earth/geoid-grid/index.js';

@@ -1,7 +1,7 @@
 import { CampaignError, faultAt, type Warning } from '../../campaign/fault.js';
 import type { Run } from '../deviations/index.js';
 import type { ColumnGuess } from './columns.js';
-import type { FrequencySeries, TimeGap } from './frequency-series.js';
+import { type FrequencySeries, pathOfLine, type TimeGap } from './frequency-series.js';
 import { inspectValues } from './inspect-values.js';
 import type { RowReader } from './row-reader.js';
 import { findDisorder, median, reordered, sampled, sortedOrder, spacingOf } from './time-order.js';
@@ -16,7 +16,6 @@ const FOLLOW = 0.1;
 /** What the assembly needs of the reader's options. */
 export interface AssemblyOptions {
   readonly tauS?: number;
-  readonly name?: string;
 }
 
 interface Stored {
@@ -34,10 +33,9 @@ export function assembleSeries(
   options: AssemblyOptions,
   nominalName: string | null,
 ): FrequencySeries {
-  const path = options.name ?? 'series';
   const warnings: Warning[] = [];
   const warn = (code: string, line: number | null, message: string): void => {
-    warnings.push({ code, path: line === null ? path : `${path}:${line}`, message });
+    warnings.push({ code, path: pathOfLine(line), message });
   };
   const rows: Stored = {
     y: reader.y.take(),
@@ -80,14 +78,14 @@ export function assembleSeries(
     const disorder = findDisorder(rows.startS);
     if (disorder.count > 0) {
       const spacing = spacingOf(rows.startS, stampS) ?? 0;
-      for (const w of disorderWarnings(disorder, spacing, lineOf, path)) warnings.push(w);
+      for (const w of disorderWarnings(disorder, spacing, lineOf)) warnings.push(w);
       order = sortedOrder(rows.startS);
       pick(rows, order);
     }
   }
-  const tau = intervalOf(rows, timed, stampS, options, warn, path);
+  const tau = intervalOf(rows, timed, stampS, options, warn);
   const { sampleS, regular } = sampleLength(rows, tau.intervalS, stampS);
-  const report = new TimeReport(path, (i) => lineOf(order?.[i] ?? i), tau.intervalS);
+  const report = new TimeReport((i) => lineOf(order?.[i] ?? i), tau.intervalS);
   const kept = keepFollowing(rows, tau.intervalS, sampleS, regular, timed ? stampS : 0, report);
   if (kept.keep !== null) {
     pick(rows, kept.keep);
@@ -100,7 +98,7 @@ export function assembleSeries(
   }
   const finalOrder = order;
   lineOf = finalOrder === null ? lineOf : (i) => reader.lines.lineOf(finalOrder[i]!);
-  warnings.push(...inspectValues(rows.y, kept.runs, tau.intervalS, lineOf, path));
+  warnings.push(...inspectValues(rows.y, kept.runs, tau.intervalS, lineOf));
   const lengthS = regular || rows.stopS === null ? null : rows.stopS.map((stop, i) => stop - rows.startS[i]!);
   return {
     y: rows.y,
@@ -136,7 +134,6 @@ function intervalOf(
   stampS: number,
   options: AssemblyOptions,
   warn: Warn,
-  path: string,
 ): { intervalS: number } {
   const stated = options.tauS ?? null;
   if (!timed) {
@@ -152,7 +149,7 @@ function intervalOf(
     const length = rows.stopS === null ? null : rows.stopS[0]! - rows.startS[0]!;
     if (length === null) {
       throw new CampaignError([
-        faultAt('interval-unknown', path, 'a single date', 'two samples, a stop, or the sampling interval: --tau 1s'),
+        faultAt('interval-unknown', '', 'a single date', 'two samples, a stop, or the sampling interval: --tau 1s'),
       ]);
     }
     return { intervalS: length };
@@ -161,7 +158,7 @@ function intervalOf(
     throw new CampaignError([
       faultAt(
         'interval-mismatch',
-        path,
+        '',
         `samples ${found} s apart, stated ${stated} s`,
         'the sampling interval that the dates have',
       ),

@@ -36,6 +36,9 @@ export interface FrequencySeries {
   lineOf(sample: number): number;
 }
 
+/** Where in the file a fault or warning belongs, as its path; '' for the file as a whole. */
+export const pathOfLine = (line: number | null): string => (line === null ? '' : `line ${line}`);
+
 /** Length of a sample [s]. */
 export const lengthOfSampleS = (series: FrequencySeries, i: number): number => series.lengthS?.[i] ?? series.sampleS;
 

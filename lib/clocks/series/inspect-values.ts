@@ -1,5 +1,6 @@
 import type { Warning } from '../../campaign/fault.js';
 import type { Run } from '../deviations/index.js';
+import { pathOfLine } from './frequency-series.js';
 import { findOutliers, type Outliers } from './outliers.js';
 import { findStep } from './steps.js';
 import { findUnitSlips, type UnitSlip } from './unit-slips.js';
@@ -17,11 +18,10 @@ export function inspectValues(
   runs: readonly Run[],
   intervalS: number,
   lineOf: (i: number) => number,
-  path: string,
 ): Warning[] {
   const warnings: Warning[] = [];
   const say = (code: string, sample: number | null, message: string): void => {
-    warnings.push({ code, path: sample === null ? path : `${path}:${lineOf(sample)}`, message });
+    warnings.push({ code, path: pathOfLine(sample === null ? null : lineOf(sample)), message });
   };
   const lines = (samples: readonly number[], count: number): string =>
     `${count === 1 ? 'line' : 'lines'} ${samples.slice(0, MOST_LINES).map(lineOf).join(', ')}${count > MOST_LINES ? ` and ${count - MOST_LINES} more` : ''}`;

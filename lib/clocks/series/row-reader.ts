@@ -16,8 +16,6 @@ export interface RowPlan {
   readonly utcStated: boolean;
   /** for `hz` and `ratio` */
   readonly nominal: Nominal | null;
-  /** the name of the file, for faults */
-  readonly path: string;
 }
 
 /** Faults after which reading stops: the rest would be more of the same. */
@@ -312,7 +310,6 @@ export class RowReader {
   }
 
   #fault(code: string, line: number, column: number, found: string, expected: string): void {
-    if (this.faults.length < MOST_FAULTS)
-      this.faults.push({ code, path: this.#plan.path, line, column, found, expected });
+    if (this.faults.length < MOST_FAULTS) this.faults.push({ code, path: '', line, column, found, expected });
   }
 }

@@ -16,8 +16,6 @@ export interface SeriesOptions {
   /** what a `hz` or `ratio` column is compared with; without it the recommended frequency, or ratio of two, or 1, that the first
    *  value lies next to, which a warning names */
   readonly nominal?: Nominal;
-  /** the file's name, for messages */
-  readonly name?: string;
 }
 
 /** Bytes that the guess of the columns may look at. */
@@ -31,7 +29,6 @@ const RETURN = 13;
  * @throws {CampaignError} from `push` or `finish`: what could not be read, with line and column */
 export class FrequencySeriesParser {
   readonly #options: SeriesOptions;
-  readonly #path: string;
   #head: Uint8Array | null = new Uint8Array(0);
   #reader: RowReader | null = null;
   #guess: ColumnGuess | null = null;
@@ -44,7 +41,6 @@ export class FrequencySeriesParser {
 
   constructor(options: SeriesOptions = {}) {
     this.#options = options;
-    this.#path = options.name ?? 'series';
   }
 
   /** How far it has come, for a progress display. */
@@ -79,7 +75,7 @@ export class FrequencySeriesParser {
     this.#throwFaults(reader);
     if (reader.y.length === 0) {
       const found = `${reader.rows} rows, none with a valid value`;
-      throw new CampaignError([faultAt('no-data', this.#path, found, 'at least one valid sample')]);
+      throw new CampaignError([faultAt('no-data', '', found, 'at least one valid sample')]);
     }
     return assembleSeries(reader, this.#guess!, this.#options, this.#nominal?.named ?? null);
   }
@@ -97,7 +93,7 @@ export class FrequencySeriesParser {
     const head = readHead(decodeUtf8(bytes, bom, end));
     if ('code' in head) {
       const { code, line, column, found, expected } = head;
-      throw new CampaignError([{ code, path: this.#path, line, column, found, expected }]);
+      throw new CampaignError([{ code, path: '', line, column, found, expected }]);
     }
     this.#guess = this.#settleColumns(head);
     const { words, scale, utcStated } = this.#guess;
@@ -108,7 +104,6 @@ export class FrequencySeriesParser {
       scale,
       utcStated,
       nominal: this.#nominal?.nominal ?? null,
-      path: this.#path,
     });
     this.#skipUntil = head.firstDataLine;
     this.#take(bom > 0 ? bytes.subarray(bom) : bytes);
@@ -119,12 +114,7 @@ export class FrequencySeriesParser {
     if (columns !== undefined) {
       if (columns.length !== head.width) {
         const found = `${head.width} columns in line ${head.firstDataLine}, ${columns.length} words: ${columns.join(' ')}`;
-        const fault = faultAt(
-          'column-count',
-          this.#path,
-          found,
-          'a word for every column, - for one that is not to be read',
-        );
+        const fault = faultAt('column-count', '', found, 'a word for every column, - for one that is not to be read');
         throw new CampaignError([{ ...fault, line: head.firstDataLine, column: 1 }]);
       }
       return { words: columns, certainty: 'certain', reason: 'as stated', scale: 1, utcStated: false };
@@ -136,7 +126,7 @@ export class FrequencySeriesParser {
       const why = unitUnclear ? `${guess.reason}; ${head.scaleSeen} stands in the header` : guess.reason;
       const fault = faultAt(
         'columns-unsure',
-        this.#path,
+        '',
         `${words} (${why})`,
         'columns named: --columns "mjd y", say, y as a plain fraction',
       );
@@ -157,7 +147,7 @@ export class FrequencySeriesParser {
       kind === 'hz' ? 'the nominal frequency in Hz or the transition' : 'the nominal ratio or the two transitions';
     const fault = faultAt(
       'nominal-unknown',
-      this.#path,
+      '',
       `${text}, a ${kind} near no recommended one`,
       `${what}, to make a fraction of it`,
     );

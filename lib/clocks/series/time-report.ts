@@ -1,5 +1,6 @@
 import type { Warning } from '../../campaign/fault.js';
 import type { Run } from '../deviations/index.js';
+import { pathOfLine } from './frequency-series.js';
 import type { Disorder } from './time-order.js';
 
 const DAY_S = 86400;
@@ -29,9 +30,9 @@ function leapOf(seconds: number, intervalS: number): 'day' | 'hour' | null {
   return Math.abs(Math.round(seconds / HOUR_S)) === 1 && close(HOUR_S) ? 'hour' : null;
 }
 
-const leapWarning = (leap: 'day' | 'hour', path: string, line: number, direction: string, size: string): Warning => ({
+const leapWarning = (leap: 'day' | 'hour', line: number, direction: string, size: string): Warning => ({
   code: `${leap}-leap`,
-  path: `${path}:${line}`,
+  path: pathOfLine(line),
   message:
     leap === 'day'
       ? `time leaps ${direction} by exactly ${size} at line ${line}: is the date wrong from there, or up to there? Dates are taken as written.`
@@ -39,30 +40,24 @@ const leapWarning = (leap: 'day' | 'hour', path: string, line: number, direction
 });
 
 /** What is said about rows out of order. The samples are sorted; nothing is dropped for it. */
-export function disorderWarnings(
-  disorder: Disorder,
-  intervalS: number,
-  lineOf: (i: number) => number,
-  path: string,
-): Warning[] {
+export function disorderWarnings(disorder: Disorder, intervalS: number, lineOf: (i: number) => number): Warning[] {
   const lines = disorder.places.slice(0, MOST_LINES).map((p) => lineOf(p.sample));
   const warnings: Warning[] = [
     {
       code: 'time-order',
-      path: `${path}:${lines[0]}`,
+      path: pathOfLine(lines[0]!),
       message: `time goes back ${disorder.count === 1 ? 'once' : `${disorder.count} times`}, at ${lineList(lines, disorder.count)}: samples are sorted by their start.`,
     },
   ];
   for (const { sample, stepS } of disorder.places) {
     const leap = leapOf(stepS - intervalS, intervalS);
-    if (leap) warnings.push(leapWarning(leap, path, lineOf(sample), 'back', span(-(stepS - intervalS))));
+    if (leap) warnings.push(leapWarning(leap, lineOf(sample), 'back', span(-(stepS - intervalS))));
   }
   return warnings;
 }
 
 /** Gathers what the pass through the time axis meets, and says it in a few sentences with line numbers. */
 export class TimeReport {
-  readonly #path: string;
   readonly #lineOf: (i: number) => number;
   readonly #intervalS: number;
   readonly #duplicateLines: number[] = [];
@@ -80,8 +75,7 @@ export class TimeReport {
   #worstJitterS = 0;
   #deadS = 0;
 
-  constructor(path: string, lineOf: (i: number) => number, intervalS: number) {
-    this.#path = path;
+  constructor(lineOf: (i: number) => number, intervalS: number) {
     this.#lineOf = lineOf;
     this.#intervalS = intervalS;
   }
@@ -111,8 +105,7 @@ export class TimeReport {
       this.#longestGapLine = line;
     }
     const leap = leapOf(missingS, this.#intervalS);
-    if (leap && this.#leaps.length < MOST_LINES)
-      this.#leaps.push(leapWarning(leap, this.#path, line, 'forward', span(missingS)));
+    if (leap && this.#leaps.length < MOST_LINES) this.#leaps.push(leapWarning(leap, line, 'forward', span(missingS)));
   }
 
   jitter(seconds: number): void {
@@ -126,7 +119,7 @@ export class TimeReport {
   warnings(sampleS: number): Warning[] {
     const said: Warning[] = [];
     const say = (code: string, line: number | null, message: string): void => {
-      said.push({ code, path: line === null ? this.#path : `${this.#path}:${line}`, message });
+      said.push({ code, path: pathOfLine(line), message });
     };
     if (this.#duplicates > 0) {
       const where = lineList(this.#duplicateLines, this.#duplicates);

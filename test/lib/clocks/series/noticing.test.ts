@@ -23,7 +23,7 @@ describe('time', () => {
     ]);
     expect(series.dropped).toBe(0);
     expect(message(series, 'gaps')).toMatch(
-      /series:21 2 gaps, 31 s in all, before lines 21, 371; the longest, 30 s, before line 21/,
+      /line 21 2 gaps, 31 s in all, before lines 21, 371; the longest, 30 s, before line 21/,
     );
   });
 
@@ -60,7 +60,7 @@ describe('time', () => {
     const series = readFrequencySeries(text, { columns: ['iso', 'stop', 'y'] });
     expect(series.dropped).toBe(1);
     expect(series.gaps).toEqual([{ startS: 200, endS: 210 }]);
-    expect(message(series, 'overlap')).toMatch(/series:21 .*line 21/);
+    expect(message(series, 'overlap')).toMatch(/line 21 .*line 21/);
   });
 
   it.each([
@@ -138,7 +138,7 @@ describe('values', () => {
   it('an outlier: its line and distance; it stays in', () => {
     const series = readFrequencySeries(plain(y.map((v, i) => (i === 77 ? v + 2e-15 : v))));
     expect(series.y.length).toBe(n);
-    expect(message(series, 'outliers')).toMatch(/series:78 one value .*line 78/);
+    expect(message(series, 'outliers')).toMatch(/line 78 one value .*line 78/);
     expect(codes(series)).toEqual(['outliers']);
   });
 
