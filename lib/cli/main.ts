@@ -3,7 +3,7 @@ import { version } from '../constants/version.js';
 import { closest } from '../quantity/near-match.js';
 import { reportAsCsv, tableAsCsv } from '../report/as-csv.js';
 import { reportAsMarkdown, tableAsMarkdown } from '../report/as-markdown.js';
-import { cautionAsText, reportAsText } from '../report/as-text.js';
+import { cautionsAsText, reportAsText } from '../report/as-text.js';
 import { type ParsedWords, parseWords } from './arguments.js';
 import { type Answer, type Call, type Command, type PlainText, UsageError } from './command.js';
 import { commands } from './commands/index.js';
@@ -174,7 +174,7 @@ function print(answer: Answer | PlainText, form: Form, tableId: string | null): 
     );
   if (form === 'csv') {
     out(table ? tableAsCsv(table) : reportAsCsv(report));
-    for (const caution of report.cautions) err(`${cautionAsText(caution)}\n`); // no place for them among the values
+    if (report.cautions.length > 0) err(`${cautionsAsText(report.cautions)}\n`); // no place for them among the values
   } else if (form === 'markdown') out(table ? `${tableAsMarkdown(table)}\n` : reportAsMarkdown(report));
   else out(reportAsText(report));
   return answer.status;

@@ -86,10 +86,20 @@ export function reportAsText(report: Report): string {
     parts.push(
       [printable(table.title), tableAsText(table), ...table.notes.map((note) => wrap(printable(note)))].join('\n'),
     );
-  if (report.cautions.length > 0) parts.push(report.cautions.map(cautionAsText).join('\n'));
+  if (report.cautions.length > 0) parts.push(cautionsAsText(report.cautions));
   parts.push([...report.conventions.map((note) => wrap(printable(note))), report.provenance].join('\n'));
   return `${parts.join('\n\n')}\n`;
 }
 
-export const cautionAsText = ({ code, path, message }: Report['cautions'][number]): string =>
-  wrap(`Caution: ${printable(path === '' ? '' : `${path}: `)}${printable(message)} [${code}]`, 96, '  ');
+/** More cautions than this are counted, not printed: nobody reads the hundredth default. */
+const MAX_CAUTIONS = 30;
+
+export function cautionsAsText(cautions: Report['cautions']): string {
+  const shown = cautions
+    .slice(0, MAX_CAUTIONS)
+    .map(({ code, path, message }) =>
+      wrap(`Caution: ${printable(path === '' ? message : `${path}: ${message}`)} [${printable(code)}]`, 96, '  '),
+    );
+  const rest = cautions.length - shown.length;
+  return [...shown, ...(rest > 0 ? [`Caution: ${rest} more like these; --json lists all of them`] : [])].join('\n');
+}

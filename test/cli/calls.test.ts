@@ -257,6 +257,21 @@ describe('check', () => {
     });
   });
 
+  it('counts cautions beyond the thirtieth, and faults beyond the fiftieth', () => {
+    const many = (more: object) => ({
+      format: 'plumbtick-campaign/1',
+      sites: Array.from({ length: 80 }, (_, i) => ({ id: `s${i}`, lat: 50, lon: 10, ...more })),
+    });
+    const unleveled = plumbtick(['check', '-'], JSON.stringify(many({ g: 9.81 }))); // no determination anywhere
+    expect(unleveled.status).toBe(0);
+    expect(unleveled.stdout.match(/^Caution: sites\./gm)).toHaveLength(30);
+    expect(unleveled.stdout).toContain('Caution: 50 more like these; --json lists all of them');
+    const wrong = plumbtick(['check', '-'], JSON.stringify(many({ colour: 'red' })));
+    expect(wrong.status).toBe(1);
+    expect(wrong.stdout.match(/\[unknown-key\]/g)).toHaveLength(50);
+    expect(wrong.stdout).toContain('and 30 more; --json lists all of them');
+  });
+
   it('prints faults on standard output for people, with file, line and column', () => {
     const name = file('wrong.json', '{\n "format": "plumbtick-campaign/1",\n "sites": [],\n "targett": "1 cm"\n}\n');
     const { status, stdout } = plumbtick(['check', name]);

@@ -2,7 +2,7 @@ import { predict } from '../../answers/predict.js';
 import type { Campaign } from '../../campaign/campaign.js';
 import { CampaignError, type Fault, faultAt, type Warning } from '../../campaign/fault.js';
 import { withPlaces } from '../../campaign/locate.js';
-import { cautionAsText } from '../../report/as-text.js';
+import { cautionsAsText } from '../../report/as-text.js';
 import { decimalCell, none, type Report, textCell, textColumn } from '../../report/index.js';
 import { readCallCampaign } from '../campaign-of-call.js';
 import type { Answer, Call, Command } from '../command.js';
@@ -91,7 +91,7 @@ function checkText(
     faults.length > 0 || campaign === null
       ? faultsAsText(call.file?.name ?? '', faults)
       : `${summary(campaign, warnings)}\n`;
-  return head + warnings.map((warning) => `${cautionAsText(warning)}\n`).join('');
+  return warnings.length === 0 ? head : `${head}${cautionsAsText(warnings)}\n`;
 }
 
 function checkReport(
