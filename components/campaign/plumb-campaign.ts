@@ -1,5 +1,4 @@
 import { type CSSResultGroup, html, nothing, type PropertyValues, type TemplateResult } from 'lit';
-import { predict } from '../../lib/answers/predict.js';
 import { CampaignError, type Fault, faultAt } from '../../lib/campaign/fault.js';
 import { withPlaces } from '../../lib/campaign/locate.js';
 import { readCampaign } from '../../lib/campaign/read.js';
@@ -7,6 +6,7 @@ import { PlumbElement } from '../plumb-element.js';
 import { computedBy } from '../shared/provenance.js';
 import { sentenceCase } from '../shared/rich-text.js';
 import { warningList } from '../shared/warnings.js';
+import { predictionFor } from '../state/answers.js';
 import { type AnsweredCampaign, CampaignProvider, type CampaignState } from '../state/campaign-context.js';
 import { campaignStyles } from './campaign-styles.js';
 import { faultInPlace } from './fault-in-place.js';
@@ -24,11 +24,13 @@ const MAX_WARNINGS = 3;
  *  `<script type="application/json">`, which also works from disk.
  *
  * @slot The elements that show the campaign.
+ * @fires plumb-select A reader has taken a link in hand; detail: `link`, its id or null.
  * @csspart base The sheet.
  * @cssproperty [--plumb-paper] Ground; likewise `--plumb-ink` and the other colours. */
 export class PlumbCampaign extends PlumbElement {
   static override properties = {
     src: { type: String },
+    link: { type: String },
     allWarnings: { state: true },
     slow: { state: true },
   };
@@ -36,6 +38,8 @@ export class PlumbCampaign extends PlumbElement {
 
   /** Address of the campaign file, relative to the page. */
   declare src: string | null;
+  /** Id of the link in hand at first; a reader may take another one. */
+  declare link: string | null;
   declare allWarnings: boolean;
   declare slow: boolean;
 
@@ -50,6 +54,7 @@ export class PlumbCampaign extends PlumbElement {
   constructor() {
     super();
     this.src = null;
+    this.link = null;
     this.allWarnings = false;
     this.slow = false;
   }
@@ -76,6 +81,7 @@ export class PlumbCampaign extends PlumbElement {
   }
 
   protected override willUpdate(changed: PropertyValues): void {
+    if (changed.has('link')) this.#provider.inHand = this.link;
     if (changed.has('src') || !this.hasUpdated) this.#load();
   }
 
@@ -133,7 +139,7 @@ export class PlumbCampaign extends PlumbElement {
   #take(text: string): void {
     try {
       const { campaign, warnings } = readCampaign(text);
-      const prediction = predict(campaign);
+      const prediction = predictionFor(campaign);
       this.#lastGood = { campaign, prediction, warnings: [...warnings, ...prediction.warnings] };
       this.#text = text;
       this.#set({ status: 'ready', ...this.#lastGood });

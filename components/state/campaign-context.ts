@@ -2,6 +2,7 @@ import type { ReactiveController, ReactiveControllerHost } from 'lit';
 import type { Prediction } from '../../lib/answers/prediction.js';
 import type { Campaign } from '../../lib/campaign/campaign.js';
 import type { Fault, Warning } from '../../lib/campaign/fault.js';
+import './in-hand.js';
 
 /** A campaign with what follows from it. */
 export interface AnsweredCampaign {
@@ -18,7 +19,8 @@ export type CampaignState =
   | { readonly status: 'failed'; readonly faults: readonly Fault[]; readonly lastGood: AnsweredCampaign | null }
   | ({ readonly status: 'ready' } & AnsweredCampaign);
 
-type Listener = (state: CampaignState) => void;
+/** @param inHand id of the link that the reader has taken in hand; null: none */
+type Listener = (state: CampaignState, inHand: string | null) => void;
 
 /** Asked by an element, answered by the nearest `<plumb-campaign>` above it. */
 export class CampaignRequest extends Event {
@@ -39,6 +41,7 @@ const PROVIDER = 'plumb-campaign-provider';
 export class CampaignProvider {
   readonly #listeners = new Set<Listener>();
   #state: CampaignState = { status: 'empty' };
+  #inHand: string | null = null;
 
   constructor(host: HTMLElement) {
     host.addEventListener(CampaignRequest.type, (event) => {
@@ -46,7 +49,11 @@ export class CampaignProvider {
       event.stopPropagation();
       this.#listeners.add(event.listener);
       event.subscribed(() => this.#listeners.delete(event.listener));
-      event.listener(this.#state);
+      event.listener(this.#state, this.#inHand);
+    });
+    host.addEventListener('plumb-select', (event) => {
+      // after everyone on the page had the chance to refuse
+      if (!event.defaultPrevented) this.inHand = event.detail.link;
     });
   }
 
@@ -60,13 +67,29 @@ export class CampaignProvider {
 
   set state(state: CampaignState) {
     this.#state = state;
-    for (const listener of this.#listeners) listener(state);
+    this.#tell();
+  }
+
+  get inHand(): string | null {
+    return this.#inHand;
+  }
+
+  set inHand(link: string | null) {
+    if (link === this.#inHand) return;
+    this.#inHand = link;
+    this.#tell();
+  }
+
+  #tell(): void {
+    for (const listener of this.#listeners) listener(this.#state, this.#inHand);
   }
 }
 
 /** Keeps an element in step with the campaign round it; `state` null: there is none. */
 export class CampaignConsumer implements ReactiveController {
   state: CampaignState | null = null;
+  /** id of the link that the reader has taken in hand; it may have left the campaign since */
+  inHand: string | null = null;
   readonly #host: ReactiveControllerHost & HTMLElement;
   #unsubscribe: (() => void) | null = null;
 
@@ -77,8 +100,9 @@ export class CampaignConsumer implements ReactiveController {
 
   readonly #ask = (): void => {
     if (this.#unsubscribe) return;
-    const listener = (state: CampaignState) => {
+    const listener: Listener = (state, inHand) => {
       this.state = state;
+      this.inHand = inHand;
       this.#host.requestUpdate();
     };
     this.#host.dispatchEvent(
@@ -98,5 +122,6 @@ export class CampaignConsumer implements ReactiveController {
     this.#unsubscribe?.();
     this.#unsubscribe = null;
     this.state = null;
+    this.inHand = null;
   }
 }

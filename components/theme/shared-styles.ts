@@ -63,6 +63,44 @@ export const sharedStyles = css`
     margin: var(--p-space-3) 0 0;
     max-width: 62em;
   }
+  .say {
+    font-size: var(--p-size-5);
+    line-height: 1.42;
+    margin: 0 0 var(--p-space-5);
+    max-width: 42em;
+    text-wrap: pretty;
+  }
+  .by {
+    font-family: var(--p-font-figure);
+    font-size: var(--p-size-1);
+    line-height: 1.5;
+    color: var(--p-ink-3);
+    margin: 6px 0 0;
+  }
+  .key-row {
+    display: flex;
+    flex-wrap: wrap;
+    gap: 10px 28px;
+    margin: 20px 0 0;
+    padding: 0;
+    list-style: none;
+    font-family: var(--p-font-figure);
+    font-size: var(--p-size-2);
+    line-height: 1.3;
+    color: var(--p-ink-2);
+  }
+  .key-row li {
+    display: flex;
+    align-items: center;
+    gap: 9px;
+  }
+  .key-row svg {
+    flex: none;
+  }
+  .in-hand {
+    color: var(--p-accent);
+    font-weight: 700;
+  }
   .caution {
     color: var(--p-caution);
     font-family: var(--p-symbol-face);
@@ -290,6 +328,10 @@ export const sharedStyles = css`
     }
   }
   @media print {
+    .say {
+      font-size: 14.5px;
+      margin-bottom: 8px;
+    }
     .btn,
     .word,
     .no-print {
