@@ -2,10 +2,11 @@ import type { FlywheelNoise } from '../clocks/dead-time.js';
 import type { FibreNoise } from '../clocks/fibre-noise.js';
 import type { OceanLoadingConstituent } from '../earth/earth-tide/ocean-loading.js';
 import type { PolePosition } from '../earth/earth-tide/pole-tide.js';
+import type { GridExcerpt, InterpolationMethod } from '../earth/geoid-grid/interpolation.js';
+import type { TideSystem } from '../earth/tide-system.js';
 import type { Radians } from '../quantity/radians.js';
 
-/** Permanent-tide system (Mäkinen 2021; IERS Conventions 2010, section 1.1). */
-export type TideSystem = 'mean' | 'zero' | 'free';
+export type { TideSystem };
 
 export type Distribution = 'normal' | 'uniform' | 'triangular' | 't';
 
@@ -37,12 +38,14 @@ export interface Measured extends Remarks {
   readonly dof: number | null;
   /** permanent-tide label as stated; null if none stands there */
   readonly tide: TideSystem | null;
-  /** terrestrial reference frame of a height, epoch in decimal years, vertical rate in m/s */
+  /** terrestrial reference frame of a height, epoch in decimal years, vertical rate in m/s, positive upwards */
   readonly frame?: string;
   readonly epochYear?: number;
-  readonly rateMPerS?: number;
+  readonly rate?: Measured;
   /** source named at a value without uncertainty: of the error that b or k of a levelling line sizes, or of the line's k·d at dH */
   readonly source?: string;
+  /** the grid off which the value was read */
+  readonly grid?: GridUse;
   /** the value as typed, for messages; null for a bare number */
   readonly text: string | null;
 }
@@ -88,11 +91,45 @@ interface DeterminationCommon extends Remarks {
   readonly cost: number | null;
 }
 
-/** A value read off a (quasi)geoid grid: the 4×4 nodes in use, or the file's name if they have not been resolved yet. */
-export interface GridReference {
+/** Where a value was read off a (quasi)geoid grid. */
+export interface GridUse {
   readonly file: string;
-  readonly parts: readonly UncertaintyPart[];
-  readonly u: number;
+  readonly method: InterpolationMethod;
+  /** the nodes round the site, kept in the campaign in place of the file; null if the file itself is needed */
+  readonly nodes: GridExcerpt | null;
+}
+
+/** The file of a gravity model, and how much of it is used. */
+export interface GravityModelUse extends Remarks {
+  readonly file: string;
+  /** null: all of it */
+  readonly maxDegree: number | null;
+  /** permanent-tide system of the coefficients, where the file does not say; null if not stated */
+  readonly tide: TideSystem | null;
+}
+
+/** A gravity model's potential at a marker, worked out from the file when the campaign was read. */
+export interface GravityModelPotential {
+  /** degree to which the series was summed */
+  readonly maxDegree: number;
+  /** ellipsoidal height at which it was summed, m, in the campaign's tide system */
+  readonly heightM: number;
+  /** W there, m²/s², in the campaign's tide system */
+  readonly potentialM2s2: number;
+  /** ∂W/∂h, m/s², negative */
+  readonly perHeightMs2: number;
+  /** standard uncertainty from the coefficients, and from what lies beyond the last degree, m²/s² */
+  readonly commissionM2s2: number;
+  readonly omissionM2s2: number;
+}
+
+/** How the errors of one model's coefficients go together between sites. */
+export interface GravityModelCorrelation {
+  readonly file: string;
+  /** ids of the sites, in the order of the matrix */
+  readonly sites: readonly string[];
+  /** correlation matrix of the commission errors */
+  readonly correlation: readonly (readonly number[])[];
 }
 
 export type Determination = DeterminationCommon &
@@ -137,7 +174,15 @@ export type Determination = DeterminationCommon &
         readonly b?: Measured;
         readonly k?: Measured;
       }
-    | { readonly kind: 'gravity-model'; readonly h: Measured | null; readonly W: Measured }
+    | {
+        readonly kind: 'gravity-model';
+        readonly h: Measured | null;
+        readonly model: GravityModelUse;
+        /** standard uncertainties as geoid heights, m, where stated in place of those from the file and Kaula's rule */
+        readonly commissionM: number | null;
+        readonly omissionM: number | null;
+        readonly atMarker: GravityModelPotential;
+      }
   );
 
 export type DeterminationKind = Determination['kind'];
@@ -302,6 +347,8 @@ export interface Campaign extends Remarks {
   readonly love: Remarks & { readonly h2: number; readonly k2: number };
   /** coordinates of the pole in order of time, or one position for all times */
   readonly pole?: readonly PolePosition[];
+  /** decimal year at which the potentials are wanted; heights with a rate are brought to it */
+  readonly epochYear?: number;
   readonly sources: readonly Source[];
   readonly datums: readonly Datum[];
   readonly transitions: readonly Transition[];
@@ -309,6 +356,8 @@ export interface Campaign extends Remarks {
   readonly clocks: readonly Clock[];
   readonly links: readonly Link[];
   readonly measurements: readonly Measurement[];
+  /** one per gravity model whose file gives standard deviations; none if absent */
+  readonly gravityModels?: readonly GravityModelCorrelation[];
   readonly correlations: readonly MeasurementCorrelation[];
   readonly methods?: ClassicalMethods;
 }

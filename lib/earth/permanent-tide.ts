@@ -1,7 +1,7 @@
-import type { TideSystem } from '../campaign/campaign.js';
 import type { Radians } from '../quantity/radians.js';
 import { GRS80 } from './level-ellipsoid.js';
 import { checkLatitude, normalGravity } from './normal-field.js';
+import type { TideSystem } from './tide-system.js';
 
 /** Degree-2 Love numbers by which the permanent tide deforms the Earth and its potential. */
 export interface LoveNumbers {

@@ -1,5 +1,5 @@
-import type { TideSystem } from '../../campaign/campaign.js';
 import type { Warning } from '../../campaign/fault.js';
+import type { TideSystem } from '../tide-system.js';
 
 /** What the bounds of a grid mean: its outermost nodes, or the outer edges of cells whose middles are the nodes. */
 export type Registration = 'nodes' | 'edges';

@@ -1,5 +1,5 @@
-import type { TideSystem } from '../../campaign/campaign.js';
 import { CampaignError, type Fault, type Warning } from '../../campaign/fault.js';
+import type { TideSystem } from '../tide-system.js';
 import type { GeoidSurface, GridFormat } from './geoid-grid.js';
 import type { PrintedAxis, PrintedNumber } from './registration.js';
 

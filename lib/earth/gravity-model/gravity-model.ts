@@ -1,5 +1,5 @@
-import type { TideSystem } from '../../campaign/campaign.js';
 import type { Warning } from '../../campaign/fault.js';
+import type { TideSystem } from '../tide-system.js';
 
 /** What the model's standard deviations are: formal ones of the adjustment, calibrated against independent data, or none. */
 export type CoefficientErrors = 'calibrated' | 'formal' | 'unknown' | 'no';

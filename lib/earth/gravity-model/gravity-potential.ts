@@ -1,8 +1,8 @@
-import type { TideSystem } from '../../campaign/campaign.js';
 import { CampaignError, faultAt } from '../../campaign/fault.js';
 import { type EllipsoidalPosition, geodeticToGeocentric } from '../geocentric.js';
 import { GRS80 } from '../level-ellipsoid.js';
 import { LOVE_NUMBERS, type LoveNumbers, tideConversion } from '../permanent-tide.js';
+import type { TideSystem } from '../tide-system.js';
 import { coefficientIndex } from './gravity-model.js';
 import type { GravitySynthesis } from './synthesis.js';
 

@@ -1,6 +1,6 @@
-import type { TideSystem } from '../../campaign/campaign.js';
 import { CampaignError, type Fault, type Warning } from '../../campaign/fault.js';
 import { closest } from '../../quantity/near-match.js';
+import type { TideSystem } from '../tide-system.js';
 import type { CoefficientErrors } from './gravity-model.js';
 
 /** What the head of an ICGEM file says. */
