@@ -7,7 +7,7 @@ import {
   type PhaseRecord,
   phaseRecordOf,
 } from '../clocks/deviations/index.js';
-import { type MeanBasis, type MeanUncertainty, meanUncertainty } from '../clocks/mean-uncertainty.js';
+import { type MeanBasis, type MeanUncertainty } from '../clocks/mean-uncertainty.js';
 import { NOISE_NAMES } from '../clocks/noise-identification.js';
 import { reduceSeries } from '../clocks/reduction.js';
 import { type FrequencySeries, instantOf } from '../clocks/series/index.js';
@@ -59,8 +59,8 @@ export interface SeriesQuestion {
  *  deviations with their intervals.
  * @see lib/clocks/deviations, lib/clocks/mean-uncertainty for the methods and their sources */
 export function analyseSeries(series: FrequencySeries, question: SeriesQuestion = {}): SeriesAnswer {
-  const record = phaseRecordOf(series.y, series.runs);
   const { mean, uncertainty } = reduceSeries(series);
+  const record = phaseRecordOf(series.y, series.runs);
   const warnings: Warning[] = [...series.warnings];
   const factors = question.factors ?? octaveFactors(record);
   const rows = deviationsAt(record, series.intervalS, factors, question.kinds ?? DEVIATION_KINDS);
