@@ -16,6 +16,8 @@ export interface SitePotentials {
   readonly groups: SiteGroups;
   /** the observations in the fit, in file order */
   readonly fitted: readonly DeterminationObservation[];
+  /** per site its column in the solution; −1 for one that a group without a level is held at */
+  readonly columns: ArrayLike<number>;
   readonly solution: LeastSquaresSolution;
 }
 
@@ -73,7 +75,7 @@ export function solveSitePotentials(model: Model): SitePotentials {
     });
     return { value: reference + solution.estimate[column]!, gradient: gradientOfRow(row) };
   });
-  return { sites, groups, fitted, solution };
+  return { sites, groups, fitted, columns: columnOf, solution };
 }
 
 function contradiction(e: ContradictionError, fitted: readonly DeterminationObservation[]): CampaignError {

@@ -9,7 +9,7 @@ interface SourceField {
   readonly placeIndex: Map<string, number>;
   /** first slot of the field */
   start: number;
-  /** dense correlation between places, made on first use and only for a correlation length */
+  /** dense correlation between places, made on first use and only where it differs from pair to pair */
   rho: Float64Array | null;
 }
 
@@ -19,6 +19,7 @@ interface SourceField {
  *  since Sᵀ·R·S is what the source adds (GUM 5.2.2, F.1.2.3). */
 export class InputCovariance {
   readonly inputs: readonly Input[];
+  readonly sources: readonly ErrorSource[];
   readonly #fields: SourceField[] = [];
   /** per input, variance of its independent parts */
   readonly #own: Float64Array;
@@ -31,6 +32,7 @@ export class InputCovariance {
 
   constructor(inputs: readonly Input[], sources: readonly ErrorSource[]) {
     this.inputs = inputs;
+    this.sources = sources;
     this.#own = new Float64Array(inputs.length);
     const fieldOf = new Map<string, number>();
     for (const source of sources) {
@@ -66,10 +68,8 @@ export class InputCovariance {
   /** Correlation of a source between two of its places. */
   #rho(field: SourceField, p: number, q: number): number {
     if (p === q) return 1;
-    const { correlation, correlationLengthM } = field.source;
-    if (correlationLengthM === null) return correlation ?? 1;
-    field.rho ??= correlationBetweenPlaces(field.places, correlationLengthM);
-    return field.rho[p * field.places.length + q]!;
+    const rho = denseCorrelation(field);
+    return rho === null ? (field.source.correlation ?? 1) : rho[p * field.places.length + q]!;
   }
 
   /** S per slot, and the slots that it touches per field. */
@@ -100,7 +100,8 @@ export class InputCovariance {
     const n = field.places.length;
     const image = new Float64Array(n);
     const { start, source } = field;
-    if (source.correlationLengthM === null) {
+    const dense = denseCorrelation(field);
+    if (dense === null) {
       const rho = source.correlation ?? 1;
       let total = 0;
       for (const slot of touched) total += sums[slot]!;
@@ -108,11 +109,10 @@ export class InputCovariance {
       for (const slot of touched) image[slot - start]! += (1 - rho) * sums[slot]!;
       return image;
     }
-    field.rho ??= correlationBetweenPlaces(field.places, source.correlationLengthM);
     for (const slot of touched) {
       const s = sums[slot]!;
       const row = (slot - start) * n;
-      for (let q = 0; q < n; q++) image[q]! += field.rho[row + q]! * s;
+      for (let q = 0; q < n; q++) image[q]! += dense[row + q]! * s;
     }
     return image;
   }
@@ -122,19 +122,19 @@ export class InputCovariance {
     const { start, source } = field;
     let squares = 0;
     for (const slot of touched) squares += sums[slot]! * sums[slot]!;
-    if (source.correlationLengthM === null) {
+    const dense = denseCorrelation(field);
+    if (dense === null) {
       const rho = source.correlation ?? 1;
       let total = 0;
       for (const slot of touched) total += sums[slot]!;
       return rho * total * total + (1 - rho) * squares;
     }
-    field.rho ??= correlationBetweenPlaces(field.places, source.correlationLengthM);
     const n = field.places.length;
     let mixed = 0;
     for (let a = 1; a < touched.length; a++) {
       const row = (touched[a]! - start) * n - start;
       let inner = 0;
-      for (let b = 0; b < a; b++) inner += field.rho[row + touched[b]!]! * sums[touched[b]!]!;
+      for (let b = 0; b < a; b++) inner += dense[row + touched[b]!]! * sums[touched[b]!]!;
       mixed += sums[touched[a]!]! * inner;
     }
     return squares + 2 * mixed;
@@ -228,6 +228,19 @@ interface Load {
   readonly sums: Float64Array;
   /** per field index (sparse), its touched slots */
   readonly touched: readonly (readonly number[])[];
+}
+
+/** Correlation between all places of a source, in rows; null where it is one number for every pair. */
+function denseCorrelation(field: SourceField): Float64Array | null {
+  const { correlationLengthM, between } = field.source;
+  if (between) {
+    const n = field.places.length;
+    field.rho ??= Float64Array.from({ length: n * n }, (_, i) => {
+      const [p, q] = [Math.floor(i / n), i % n];
+      return p === q ? 1 : between(field.places[p]!, field.places[q]!);
+    });
+  } else if (correlationLengthM !== null) field.rho ??= correlationBetweenPlaces(field.places, correlationLengthM);
+  return field.rho;
 }
 
 function placeOf(field: SourceField, place: Place): number {
