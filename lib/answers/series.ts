@@ -7,7 +7,7 @@ import {
   type PhaseRecord,
   phaseRecordOf,
 } from '../clocks/deviations/index.js';
-import { type MeanBasis, type MeanUncertainty } from '../clocks/mean-uncertainty.js';
+import type { MeanBasis, MeanUncertainty } from '../clocks/mean-uncertainty.js';
 import { NOISE_NAMES } from '../clocks/noise-identification.js';
 import { reduceSeries } from '../clocks/reduction.js';
 import { type FrequencySeries, instantOf } from '../clocks/series/index.js';
