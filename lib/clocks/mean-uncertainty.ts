@@ -1,3 +1,4 @@
+import { formatDuration } from '../quantity/index.js';
 import { chiSquareUpperTail, studentTCdf } from '../uncertainty/distributions/index.js';
 import { type Deviation, deviationsAt, octaveFactors, type PhaseRecord } from './deviations/index.js';
 import { identifyNoise, NOISE_NAMES, type NoiseIdentification } from './noise-identification.js';
@@ -97,7 +98,7 @@ export function meanUncertainty(
   const noise = dominantNoise(record);
   const reference = table.find((d) => d.averagingFactor === (noise?.averagingFactor ?? 1)) ?? first;
   const trusted = table.filter((d) => d.edf >= TRUSTED_EDF).at(-1) ?? first;
-  const T = seconds(totalS);
+  const T = formatDuration(totalS);
   if (noise !== null && noise.alpha <= -2) {
     const u = trusted.value * Math.sqrt(totalS / trusted.tauS);
     const words = `${NOISE_NAMES[noise.alpha]}: not averageable; ${sci(trusted.value)} at ${seconds(trusted.tauS)} grows as √T to ${sci(u)} over ${T}, and more data make it no smaller`;

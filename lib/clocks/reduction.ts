@@ -154,9 +154,9 @@ function weightedMean(y: Float64Array, weights: Float64Array, total: number): nu
   // Twice, so that the rounding of the first mean is made good by the mean of the residuals.
   let first = 0;
   for (let i = 0; i < y.length; i++) first += y[i]! * (weights[i]! / total);
-  const rest = new Float64Array(y.length);
-  for (let i = 0; i < y.length; i++) rest[i] = (y[i]! - first) * (weights[i]! / total);
-  return first + compensatedSum(rest);
+  let rest = 0;
+  for (let i = 0; i < y.length; i++) rest += (y[i]! - first) * (weights[i]! / total);
+  return first + rest;
 }
 
 /** Least-squares line through the samples, weighted by length and centred on the middle of the valid time; takes the slope out. */

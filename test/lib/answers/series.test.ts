@@ -60,7 +60,7 @@ describe('what is said of a series', () => {
     expect(walk.warnings.map((w) => w.code)).toContain('not-averageable');
     const flicker = analyseSeries(readFrequencySeries(plain([...powerLawFm(2048, -1, 1e-17, 3)])));
     expect(flicker.basis.rule).toBe('longest-trusted-tau');
-    expect(flicker.basis.words).toMatch(/next 2048 s is expected within ±u in \d+ %/);
+    expect(flicker.basis.words).toMatch(/next 34\.1\u00a0min is expected within ±u in \d+ %/);
   });
 
   it('few samples: white noise is assumed and said to be', () => {
