@@ -26,6 +26,11 @@ export interface PlanPart {
   readonly of: string;
 }
 
+/** The largest part, and its share of the variance: covariance-true, so that it can pass 1. */
+export interface PlanLimit extends PlanPart {
+  readonly share: number;
+}
+
 /** Where a part belongs in the sums of `shares`. */
 export type PlanEnd = 'from' | 'to' | 'link' | 'ratio';
 
@@ -59,7 +64,7 @@ export interface PlanPoint {
   /** null where uY is 0 */
   readonly shares: PlanShares | null;
   /** the largest part of uY²; null where uY is 0 */
-  readonly limit: PlanPart | null;
+  readonly limit: PlanLimit | null;
 }
 
 /** Everything about a link that its plan needs, worked out once. */
@@ -160,13 +165,13 @@ export function pointOf(
     uY,
     uH: (uY * C2) / gravityMs2,
     shares: variance > 0 ? sharesOf(statisticalPartsOfIt, fixed, variance) : null,
-    limit: variance > 0 ? largest(parts) : null,
+    limit: variance > 0 ? largest(parts, variance) : null,
   };
 }
 
-export function largest(parts: readonly FixedPart[]): PlanPart | null {
+function largest(parts: readonly FixedPart[], variance: number): PlanLimit | null {
   const first = parts.reduce<FixedPart | null>((best, p) => (best && best.variance >= p.variance ? best : p), null);
-  return first && { kind: first.kind, of: first.of };
+  return first && { kind: first.kind, of: first.of, share: first.variance / variance };
 }
 
 function sharesOf(statistics: readonly FixedPart[], fixed: readonly FixedPart[], variance: number): PlanShares {
@@ -184,13 +189,13 @@ function sharesOf(statistics: readonly FixedPart[], fixed: readonly FixedPart[],
 }
 
 /** What limits the comparison with the prediction: the largest part of uY², or geodesy where that is larger. */
-export function comparisonLimit(budget: LinkBudget, { uY, limit, T }: PlanPoint): PlanPart | null {
+export function comparisonLimit(budget: LinkBudget, { uY, limit, T }: PlanPoint): PlanLimit | null {
   const { uGeodesyM, gravityMs2, link } = budget;
   if (uGeodesyM === null) return limit;
   const parts = [...statisticalParts(budget, T * budget.uptime), ...budget.fixed];
   const geodesy = ((uGeodesyM * gravityMs2) / C2) ** 2;
   if (uY === 0 && geodesy === 0) return null;
-  return largest([...parts, { kind: 'geodesy', of: link.id, end: 'link', variance: geodesy }]);
+  return largest([...parts, { kind: 'geodesy', of: link.id, end: 'link', variance: geodesy }], uY * uY + geodesy);
 }
 
 /** Floor that no averaging passes, as length equivalent, m: flicker and systematics. */

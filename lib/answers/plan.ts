@@ -11,7 +11,7 @@ import {
   floorM,
   type LinkBudget,
   linkBudget,
-  type PlanPart,
+  type PlanLimit,
   type PlanPoint,
   planPoint,
   wallClockForLength,
@@ -20,7 +20,7 @@ import { type Met, metAt } from './plan-calendar.js';
 import { type SolvedCampaign, solveCampaign } from './solve-campaign.js';
 
 export type { BridgedPlan, BridgedPoint } from './plan-bridged.js';
-export type { PlanPart, PlanPartKind, PlanPoint, PlanShares } from './plan-budget.js';
+export type { PlanLimit, PlanPart, PlanPartKind, PlanPoint, PlanShares } from './plan-budget.js';
 export type { Met } from './plan-calendar.js';
 
 /** Averaging times of the curve, s: 1, 2, 5 × 10² … 10⁶ and 10⁷. */
@@ -34,7 +34,7 @@ export interface WindowPoint extends PlanPoint {
   /** time of common data in it, s */
   readonly data: number;
   /** what limits the comparison with the prediction: a part of uY², or geodesy */
-  readonly comparisonLimit: PlanPart | null;
+  readonly comparisonLimit: PlanLimit | null;
 }
 
 export interface LinkPlan {

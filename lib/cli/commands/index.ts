@@ -1,5 +1,6 @@
 import type { Command } from '../command.js';
 import { adjust } from './adjust.js';
+import { breakEven } from './break-even.js';
 import { check } from './check.js';
 import { cite } from './cite.js';
 import { compare } from './compare.js';
@@ -9,8 +10,10 @@ import { floors } from './floors.js';
 import { grid } from './grid.js';
 import { newCampaign } from './new.js';
 import { pair } from './pair.js';
+import { plan } from './plan.js';
 import { predict } from './predict.js';
 import { series } from './series.js';
+import { startingValues } from './starting-values.js';
 import { tide } from './tide.js';
 
 /** Every command, in the order of the help. */
@@ -20,6 +23,9 @@ export const commands: readonly Command[] = [
   newCampaign,
   check,
   predict,
+  plan,
+  breakEven,
+  startingValues,
   evaluate,
   compare,
   cite,
