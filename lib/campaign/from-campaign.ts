@@ -19,7 +19,6 @@ import type {
   Transition,
   TransportedClock,
 } from './campaign.js';
-import { CampaignError, faultAt } from './fault.js';
 import type {
   campaignSchema,
   correlation,
@@ -135,7 +134,18 @@ function fromDetermination(d: Determination): ReadOf<typeof determination> {
         ...common,
       };
     case 'gravity-model':
-      throw new CampaignError([faultAt('not-built', '', d.kind, 'a kind that can be written')]);
+      return {
+        kind: d.kind,
+        model: {
+          file: d.model.file,
+          ...told({ maxDegree: d.model.maxDegree, tide: d.model.tide }),
+          ...remarksOf(d.model),
+        },
+        ...told({ h: d.h }),
+        ...(d.commissionM === null ? {} : { commission: d.commissionM }),
+        ...(d.omissionM === null ? {} : { omission: d.omissionM }),
+        ...common,
+      };
   }
 }
 

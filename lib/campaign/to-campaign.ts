@@ -10,6 +10,7 @@ import type {
   Datum,
   Determination,
   Flywheel,
+  GravityModelPotential,
   Link,
   LinkFibre,
   Measurement,
@@ -75,6 +76,16 @@ const toTransition = (t: ReadOf<typeof transition>): Transition => ({
   frequency: t.frequency ?? null,
 });
 
+/** Stands until the file has been read, which is before the campaign leaves the reader (with-files.ts). */
+const NOT_SUMMED: GravityModelPotential = {
+  maxDegree: 0,
+  heightM: Number.NaN,
+  potentialM2s2: Number.NaN,
+  perHeightMs2: Number.NaN,
+  commissionM2s2: Number.NaN,
+  omissionM2s2: Number.NaN,
+};
+
 function toDetermination(d: ReadOf<typeof determination>): Determination {
   const common = {
     ...remarksOf(d),
@@ -107,6 +118,21 @@ function toDetermination(d: ReadOf<typeof determination>): Determination {
         g: d.g ?? null,
         meanGravityFactor: d.meanGravityFactor ?? null,
         datum: datumOf(d),
+      };
+    case 'gravity-model':
+      return {
+        ...common,
+        kind: d.kind,
+        h: d.h ?? null,
+        model: {
+          ...remarksOf(d.model),
+          file: d.model.file,
+          maxDegree: d.model.maxDegree ?? null,
+          tide: d.model.tide ?? null,
+        },
+        commissionM: d.commission ?? null,
+        omissionM: d.omission ?? null,
+        atMarker: NOT_SUMMED,
       };
     case 'levelled-from':
       return {

@@ -1,5 +1,5 @@
 import { formatInstant, KINDS, type QuantityKind, readMeasured } from '../quantity/index.js';
-import type { Campaign, Measured } from './campaign.js';
+import type { Campaign, GridUse, Measured } from './campaign.js';
 import { fromCampaign } from './from-campaign.js';
 import { campaignSchema } from './schema/campaign-schema.js';
 import type { Descriptor, Keys, ObjectDescriptor, PieceOf } from './schema/descriptor.js';
@@ -24,6 +24,11 @@ function jsonOf(descriptor: Descriptor, read: unknown): Json {
         const { source, ...rest } = piece;
         return objectOf(descriptor.piece, source === null ? rest : piece);
       });
+    }
+    case 'shorthand': {
+      const object = objectOf(descriptor.object, read as object);
+      const text = object[descriptor.key];
+      return Object.keys(object).length === 1 && text !== undefined ? text : object;
     }
     case 'list':
       return (read as readonly unknown[]).map((item) => jsonOf(descriptor.item, item));
@@ -71,8 +76,18 @@ function quantityOf(kind: QuantityKind, m: Measured): Json {
     ...(m.reference === undefined ? {} : { reference: m.reference }),
     ...(m.date === undefined ? {} : { date: m.date }),
   };
+  if (m.grid) return { ...gridOf(m.grid), ...rest };
   return Object.keys(rest).length === 0 ? value : { value, ...rest };
 }
+
+/** The file, and with the nodes at hand everything that is needed of it. */
+const gridOf = ({ file, method, nodes }: GridUse): { readonly [key: string]: Json } => ({
+  grid: file,
+  ...(method === 'bilinear' ? {} : { method }),
+  ...(nodes === null
+    ? {}
+    : { nodes: { lat: nodes.latitudesDeg, lon: nodes.longitudesDeg, values: nodes.valuesM as readonly number[][] } }),
+});
 
 /** A bare number beside a text with a unit could be meant in either unit. */
 const withUnit = (value: number, kind: QuantityKind): Json =>

@@ -20,7 +20,7 @@ export interface CallCampaign {
  * @throws {CampaignError} */
 export function readCallCampaign({ file }: Call): CallCampaign {
   if (file === null) throw new TypeError('a command that reads a campaign takes a file');
-  const { campaign, warnings } = readCampaign(file.text);
+  const { campaign, warnings } = readCampaign(file.text, { files: file.files });
   return {
     campaign,
     warnings,

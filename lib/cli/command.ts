@@ -1,3 +1,4 @@
+import type { CampaignFiles } from '../campaign/campaign-files.js';
 import type { Report } from '../report/table.js';
 
 export interface OptionSpec {
@@ -10,8 +11,9 @@ export interface OptionSpec {
 
 /** The words of one call, checked against the command's own options. */
 export interface Call {
-  /** Name of the file as given (`-` is standard input) and its text; null where the command takes no file */
-  readonly file: { readonly name: string; readonly text: string } | null;
+  /** Name of the file as given (`-` is standard input), its text, and what the files beside it say; null where the command takes no
+   *  file */
+  readonly file: { readonly name: string; readonly text: string; readonly files: CampaignFiles } | null;
   /** Name of the file as given, where the command reads it itself (`takesFile: 'data'`) too; null without one */
   readonly fileName: string | null;
   /** The second file of a command that takes two */

@@ -8,6 +8,7 @@ import { type ParsedWords, parseWords } from './arguments.js';
 import { type Answer, type Call, type Command, type PlainText, UsageError } from './command.js';
 import { commands } from './commands/index.js';
 import { faultsAsText } from './faults.js';
+import { filesBeside } from './files-beside.js';
 import { commandHelp, commonOptions, globalHelp } from './help.js';
 import { readFileText } from './read-file.js';
 
@@ -59,7 +60,8 @@ export async function main(words: readonly string[]): Promise<Status> {
     const text = name === null || command.takesFile === 'data' ? null : await readFileText(name);
     const secondName = command.secondFile === undefined ? null : parsed.positionals[1]!;
     const second = secondName === null ? null : { name: secondName, text: await readFileText(secondName) };
-    const call = callOf(parsed, name, name === null || text === null ? null : { name, text }, second);
+    const file = name === null || text === null ? null : { name, text, files: await filesBeside(name, text) };
+    const call = callOf(parsed, name, file, second);
     return print(await command.run(call), form, parsed.values.get('table')?.[0] ?? null);
   } catch (error) {
     if (error instanceof UsageError) {

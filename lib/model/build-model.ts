@@ -11,6 +11,7 @@ import { ReferencePotentials } from './datums.js';
 import { tieFunction } from './determination-functions.js';
 import { determinationObservation } from './determination-observations.js';
 import { datumOfGeopotentialNumber } from './first-determination.js';
+import { gravityModelSources } from './gravity-model-sources.js';
 import type { FrequencyInputs, Model } from './model.js';
 import {
   DEFAULT_GRAVITY_SOURCE,
@@ -71,6 +72,7 @@ export function buildModel(campaign: Campaign): Model {
       correlationLengthM: s.correlationLengthM ?? null,
     })),
     DEFAULT_GRAVITY_SOURCE,
+    ...gravityModelSources(campaign),
   ];
   const covariance = new InputCovariance(register.inputs, sources);
   checkPositiveSemidefinite(covariance, campaign.sources);

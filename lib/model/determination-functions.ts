@@ -1,3 +1,4 @@
+import type { GravityModelPotential } from '../campaign/campaign.js';
 import { HELMERT_FACTOR } from '../constants/defining-constants.js';
 import { GRS80 } from '../earth/level-ellipsoid.js';
 import { geopotentialOfNormalHeight } from '../earth/normal-field.js';
@@ -100,6 +101,18 @@ export const gnssGeoidFunction = (
     },
   };
 };
+
+/** A gravity model's W, summed at a height near h, and carried to h by its vertical derivative; its own errors as two inputs of
+ *  value 0. The second derivative, 3e-6 s⁻², is nothing over an uncertainty of h. */
+export const gravityModelFunction = (
+  inputs: { readonly h: number; readonly commission: number; readonly omission: number },
+  at: GravityModelPotential,
+  shiftM: number,
+): ModelFunction => ({
+  inputs: [inputs.h, inputs.commission, inputs.omission],
+  evaluate: (x) => at.potentialM2s2 + at.perHeightMs2 * (x[0]! + shiftM - at.heightM) + x[1]! + x[2]!,
+  partials: () => [at.perHeightMs2, 1, 1],
+});
 
 /** W(site) − W(other) = −g·dH; g stated for the line, or the mean of the two sites' g. */
 export const levelledFunction = (dH: number, g: readonly number[], shiftM: number): ModelFunction => ({

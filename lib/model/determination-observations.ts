@@ -9,11 +9,13 @@ import {
   dynamicHeightFunction,
   geopotentialNumberFunction,
   gnssGeoidFunction,
+  gravityModelFunction,
   levelledFunction,
   normalHeightFunction,
   orthometricHeightFunction,
   potentialFunction,
 } from './determination-functions.js';
+import { commissionSource, omissionSourceId } from './gravity-model-sources.js';
 import { levelledDifference } from './levelling-line.js';
 import type { DeterminationObservation, SiteInputs } from './model.js';
 import { atEstimates, type ModelFunction } from './model-function.js';
@@ -94,8 +96,28 @@ function determinationFunction(
   switch (d.kind) {
     case 'potential':
       return potentialFunction(own('W', d.W), tide.shift('potential', d.W, `${path}.W`, site.latitudeRad));
-    case 'gravity-model':
-      return potentialFunction(own('W', d.W), tide.shift('fixed-point-potential', d.W, `${path}.W`, site.latitudeRad));
+    case 'gravity-model': {
+      const h = height();
+      const error = (key: 'commission' | 'omission', u: number, source: string) =>
+        register.indexOf(`${path}.${key}`, () => ({
+          value: 0,
+          u,
+          parts: u > 0 ? [{ u, source }] : [],
+          place,
+          distribution: 'normal',
+          dof: null,
+        }));
+      const { atMarker, model } = d;
+      return gravityModelFunction(
+        {
+          h: h.input,
+          commission: error('commission', atMarker.commissionM2s2, commissionSource(campaign, d)),
+          omission: error('omission', atMarker.omissionM2s2, omissionSourceId(model.file, atMarker.maxDegree)),
+        },
+        atMarker,
+        h.shiftM,
+      );
+    }
     case 'geopotential-number': {
       const { input, shiftM2s2 } = datums.fitted(d.datum);
       return geopotentialNumberFunction(input, own('C', d.C), {

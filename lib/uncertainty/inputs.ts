@@ -29,6 +29,8 @@ export interface ErrorSource {
   readonly id: string;
   readonly correlation: number | null;
   readonly correlationLengthM: number | null;
+  /** correlation between two different places, where it is known from elsewhere; in place of the other two */
+  readonly between?: (a: Place, b: Place) => number;
 }
 
 /** Collects inputs so that each path becomes one input, whoever asks for it. */

@@ -76,7 +76,7 @@ function determinationMistakes(campaign: Campaign, site: Site, d: Determination,
   if ('N' in d) found.push(...tides('N', d.N, 'geoid-height'));
   if ('C' in d) found.push(...tides('C', d.C, 'geopotential-number'));
   if ('H' in d) found.push(...tides('H', d.H, 'physical-height'));
-  if ('W' in d) found.push(...tides('W', d.W, d.kind === 'gravity-model' ? 'fixed-point-potential' : 'potential'));
+  if ('W' in d) found.push(...tides('W', d.W, 'potential'));
   if ('datum' in d) found.push(...datumMistakes(campaign, site, d, n, path));
   found.push(...geoidKindMistakes(d, path, change));
   if (d.kind === 'geopotential-number') found.push(...standardGravityNumber(site, d, path, change));

@@ -33,7 +33,7 @@ const member = ({ node }: Origin, key: string): JsonNode =>
 function checkHeights(s: Readable<ReadOf<typeof site>>, reading: Reading): void {
   if (member(reading.originOf(s), 'h') !== reading.originOf(s).node) return;
   for (const d of s.determinations ?? []) {
-    if (d.kind !== 'gnss-quasigeoid' && d.kind !== 'gnss-geoid') continue;
+    if (d.kind !== 'gnss-quasigeoid' && d.kind !== 'gnss-geoid' && d.kind !== 'gravity-model') continue;
     const { context, node } = reading.originOf(d);
     if (member({ context, node }, 'h') === node)
       reading.add(

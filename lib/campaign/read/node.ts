@@ -1,7 +1,7 @@
 import type { JsonNode } from '../json-tree.js';
 import type { Descriptor } from '../schema/descriptor.js';
 import { Context, type ReadAny } from './context.js';
-import { readList, readObject, readVariant } from './object.js';
+import { readList, readObject, readShorthand, readVariant } from './object.js';
 import { readAngle, readInstant } from './place-and-time.js';
 import { readBoolean, readEnum, readId, readNumber, readReference, readText } from './plain-value.js';
 import { readPieces, readQuantity, readScalar } from './quantity.js';
@@ -27,6 +27,8 @@ function readAny(descriptor: Descriptor, node: JsonNode, context: Context): unkn
       return readQuantity(descriptor, node, context);
     case 'pieces':
       return readPieces(descriptor, node, context);
+    case 'shorthand':
+      return readShorthand(descriptor, node, context);
     case 'angle':
       return readAngle(descriptor, node, context);
     case 'instant':

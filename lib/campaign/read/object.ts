@@ -7,6 +7,7 @@ import type {
   ListName,
   ObjectDescriptor,
   ReadOf,
+  ShorthandDescriptor,
   VariantDescriptor,
 } from '../schema/descriptor.js';
 import { isBuilt, isBuiltKind } from '../schema/unbuilt.js';
@@ -83,6 +84,18 @@ function checkPairs(
   for (const [a, b] of descriptor.distinct)
     if (typeof result[a] === 'string' && result[a] === result[b])
       reading.add('self-reference', path(b), at(b), reading.show(at(b)), `another one than ${quoted(a)}`);
+}
+
+/** An object, or a text that stands for it. */
+export function readShorthand<O extends ObjectDescriptor<Keys>>(
+  { key, object }: ShorthandDescriptor<O>,
+  node: JsonNode,
+  context: Context,
+): ReadOf<O> | undefined {
+  if (node.type !== 'string') return context.read(object, node, context) as ReadOf<O> | undefined;
+  const members = new Map([[key, { value: node, keyStart: node.start }]]);
+  const whole: JsonObject = { type: 'object', start: node.start, members, duplicates: [] };
+  return context.read(object, whole, context) as ReadOf<O> | undefined;
 }
 
 /** One of several kinds of object, told apart by a key. */

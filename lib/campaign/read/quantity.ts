@@ -5,7 +5,7 @@ import {
   readMeasured,
   readStandardUncertainty,
 } from '../../quantity/index.js';
-import type { Measured, UncertaintyPart } from '../campaign.js';
+import type { GridUse, Measured, UncertaintyPart } from '../campaign.js';
 import type { JsonNode, JsonObject } from '../json-tree.js';
 import {
   type Keys,
@@ -28,18 +28,38 @@ import { isInRange, rangeInWords } from './range.js';
 export function readQuantity(descriptor: QuantityDescriptor, node: JsonNode, context: Context): Measured | undefined {
   const extras = node.type === 'object' ? readExtras(descriptor, node, context) : NO_EXTRAS;
   if (extras === undefined) return undefined;
-  const read = readMeasured(plain(node, READ_TOGETHER), descriptor.kind);
+  const read = readMeasured(measuredInput(node), descriptor.kind);
   if (!read.ok) return refuseAll(read.problems, node, context);
   const { value } = read;
   if (descriptor.sizesError && value.u > 0)
     return context.refuse(node, 'uncertainty-not-expected', 'a number without an uncertainty: it is one itself');
-  if (!inRange(value.value, descriptor, node, context)) return undefined;
-  const text = textWithUnit(value, descriptor, node);
+  const { grid, ...rest } = gridUseOf(extras);
+  if (!grid && !inRange(value.value, descriptor, node, context)) return undefined;
+  const text = grid ? null : textWithUnit(value, descriptor, node);
   const parts = withRemarks(value.parts, descriptor, node);
-  const { source, ...others } = extras;
+  const { source, ...others } = rest;
   // an exact value has no piece that could carry the source: it is kept beside
   const kept = source !== undefined && parts.length === 0 ? { source } : {};
-  return { ...value, text, parts, tide: null, ...others, ...kept };
+  const measured = { ...value, text, parts, tide: null, ...others, ...kept };
+  // what the grid gives at the site is put in before the campaign leaves the reader
+  return grid ? { ...measured, value: Number.NaN, grid } : measured;
+}
+
+/** What lib/quantity reads of a node. A grid stands in place of the value. */
+function measuredInput(node: JsonNode): unknown {
+  const input = plain(node, READ_TOGETHER);
+  const byGrid = node.type === 'object' && node.members.has('grid') && !node.members.has('value');
+  return byGrid ? { ...(input as object), value: 0 } : input;
+}
+
+function gridUseOf({ grid: file, method, nodes, ...rest }: GridExtras): Extras & { readonly grid?: GridUse } {
+  if (file === undefined) return rest;
+  const grid: GridUse = {
+    file,
+    method: method ?? 'bilinear',
+    nodes: nodes ? { latitudesDeg: nodes.lat, longitudesDeg: nodes.lon, valuesM: nodes.values } : null,
+  };
+  return { ...rest, grid };
 }
 
 /** The value as typed, with the unit that stood beside it: "43.812" alone would be shown as metres. */
@@ -114,16 +134,27 @@ type Extras = Partial<
   Pick<Measured, 'tide' | 'frame' | 'epochYear' | 'rateMPerS' | 'source' | 'note' | 'reference' | 'date'>
 >;
 
+interface GridExtras extends Extras {
+  readonly grid?: string;
+  readonly method?: GridUse['method'];
+  readonly nodes?: {
+    readonly lat: readonly number[];
+    readonly lon: readonly number[];
+    readonly values: readonly (readonly number[])[];
+  };
+}
+
 const NO_EXTRAS: Extras = {};
 
 /** The keys that lib/quantity leaves alone, and the sources named. */
-function readExtras(descriptor: QuantityDescriptor, node: JsonObject, context: Context): Extras | undefined {
+function readExtras(descriptor: QuantityDescriptor, node: JsonObject, context: Context): GridExtras | undefined {
   const keys = quantityKeys(descriptor);
   const refused = descriptor.tide ? {} : NO_TIDE;
   const own = ownMembers(node, context.key, keys, refused, context);
   // a grid stands in place of the value: that the value is missing would be a false complaint
   if (node.members.has('grid') && !isBuilt(context.key, 'grid')) return undefined;
   let good = own.size === node.members.size && node.duplicates.length === 0;
+  if (descriptor.grid) good = checkGrid(node, context) && good;
   const extras: Record<string, unknown> = {};
   for (const [key, { value }] of own) {
     const at = context.member(key);
@@ -139,11 +170,51 @@ function readExtras(descriptor: QuantityDescriptor, node: JsonObject, context: C
   }
   // faults of the numbers stand beside those of the keys, so that both are seen at once
   if (!good) {
-    const read = readMeasured(plain(node, READ_TOGETHER), descriptor.kind);
+    const read = readMeasured(measuredInput(node), descriptor.kind);
     if (!read.ok) refuseAll(read.problems, node, context);
     return undefined;
   }
-  return extras as Extras;
+  return extras as GridExtras;
+}
+
+/** A grid and a value say the same thing twice; how to interpolate and what the nodes are belong to a grid. */
+function checkGrid({ members }: JsonObject, context: Context): boolean {
+  const value = members.get('value')?.value;
+  if (members.has('grid')) {
+    if (value) context.member('grid').refuse(value, 'exclusive-keys', 'one of them', '"grid" and "value"');
+    return value === undefined && nodesAgree(members.get('nodes')?.value, context.member('nodes'));
+  }
+  const alone = ['method', 'nodes'].find((key) => members.has(key));
+  if (alone === undefined) return true;
+  const at = members.get(alone)!;
+  context.member('grid').refuse(at.value, 'missing-key', `"grid" beside "${alone}"`, 'nothing', at.keyStart);
+  return false;
+}
+
+/** As many rows and columns of values as latitudes and longitudes, evenly spaced from the south-west. */
+function nodesAgree(node: JsonNode | undefined, context: Context): boolean {
+  if (node?.type !== 'object') return true;
+  const numbers = (key: string): readonly number[] | null => {
+    const list = node.members.get(key)?.value;
+    if (list?.type !== 'array') return null;
+    return list.items.map((item) => (item.type === 'number' ? item.value : Number.NaN));
+  };
+  const [lat, lon] = [numbers('lat'), numbers('lon')];
+  const values = node.members.get('values')?.value;
+  if (!lat || !lon || values?.type !== 'array') return true;
+  const even = (list: readonly number[]) =>
+    list.every((x, i) => i === 0 || x > list[i - 1]!) &&
+    list.every((x, i) => Math.abs(x - list[0]! - (i * (list.at(-1)! - list[0]!)) / (list.length - 1)) < 1e-9);
+  const rectangular =
+    values.items.length === lat.length &&
+    values.items.every((row) => row.type === 'array' && row.items.length === lon.length);
+  if (even(lat) && even(lon) && rectangular) return true;
+  context.refuse(
+    node,
+    'grid-nodes',
+    'rising, evenly spaced "lat" and "lon", and "values" with a list per latitude of as many numbers as longitudes',
+  );
+  return false;
 }
 
 const NAMES: Readonly<Record<string, string>> = { epoch: 'epochYear', rate: 'rateMPerS' };

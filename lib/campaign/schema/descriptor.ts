@@ -91,6 +91,13 @@ export interface PiecesDescriptor<P extends ObjectDescriptor<Keys>> extends Read
   readonly piece: P;
 }
 
+/** An object for which a text may stand that is the value of one of its keys, where the others are not needed. */
+export interface ShorthandDescriptor<O extends ObjectDescriptor<Keys>> extends Reads<ReadOf<O>> {
+  readonly type: 'shorthand';
+  readonly key: string;
+  readonly object: O;
+}
+
 export type PieceOf<P> = Omit<ReadOf<P>, 'source'> & { readonly u: number; readonly source: string | null };
 
 /** Latitude or longitude in degrees; reading gives degrees. */
@@ -174,6 +181,7 @@ export type Descriptor =
   | ScalarDescriptor
   | QuantityDescriptor
   | PiecesDescriptor<AnyOf>
+  | ShorthandDescriptor<AnyOf>
   | AngleDescriptor
   | InstantDescriptor
   | ListDescriptor<AnyOf>
@@ -216,6 +224,11 @@ export const pieces = <P extends ObjectDescriptor<Keys>>(single: ScalarDescripto
   type: 'pieces',
   single,
   piece,
+});
+export const shorthand = <O extends ObjectDescriptor<Keys>>(object: O, key: string): ShorthandDescriptor<O> => ({
+  type: 'shorthand',
+  key,
+  object,
 });
 export const angle = (axis: AngleDescriptor['axis']): AngleDescriptor => ({ type: 'angle', axis });
 export const instant = (): InstantDescriptor => ({ type: 'instant' });

@@ -1,5 +1,17 @@
 import { candidate, datumReference, GRADIENT, GRAVITY, POTENTIAL, use } from './common.js';
-import { object, optional, quantity, reference, required, scalar, text, variant } from './descriptor.js';
+import {
+  number,
+  object,
+  oneOf,
+  optional,
+  quantity,
+  reference,
+  required,
+  scalar,
+  shorthand,
+  text,
+  variant,
+} from './descriptor.js';
 
 const common = { use, ...candidate } as const;
 
@@ -15,6 +27,23 @@ const g = optional(
 );
 const physicalHeight = (what: string) =>
   required(quantity('length', { tide: true }), `${what} H`, `${what} of the marker, m, positive above the datum.`);
+
+const gravityModel = shorthand(
+  object('gravity model', 'A gravity model and how much of it is used.', {
+    file: required(text(), 'File', 'ICGEM file (.gfc), beside the campaign.'),
+    maxDegree: optional(
+      number({ min: 2, max: 2700, integer: true }),
+      'Degree',
+      'Degree to which the series is summed. Default: all of the model.',
+    ),
+    tide: optional(
+      oneOf('mean', 'zero', 'free'),
+      'Tide system',
+      'Permanent-tide system of the coefficients, where the file does not say it.',
+    ),
+  }),
+  'file',
+);
 
 /** How the potential of a site is known; what each kind says about W stands in its help. */
 export const determination = variant('determination', 'Kind', 'How the gravity potential W of the site is known.', {
@@ -84,6 +113,29 @@ export const determination = variant('determination', 'Kind', 'How the gravity p
     ),
     datum: datumReference,
   }),
+  'gravity-model': object(
+    'gravity-model',
+    'W = V of the model’s spherical harmonics + centrifugal potential, at latitude, longitude and h.',
+    {
+      ...common,
+      h,
+      model: required(
+        gravityModel,
+        'Model',
+        'Gravity model in ICGEM format (.gfc), a file beside the campaign: its name, or {"file", "maxDegree", "tide"}.',
+      ),
+      commission: optional(
+        scalar('length', { min: 0, uncertainty: true }),
+        'Commission',
+        'Standard uncertainty from the coefficients, as a geoid height, m. Default: from their standard deviations in the file, with the covariance between sites.',
+      ),
+      omission: optional(
+        scalar('length', { min: 0, uncertainty: true }),
+        'Omission',
+        'Standard uncertainty from what lies beyond the last degree N, as a geoid height, m. Default: Kaula’s rule, 64 m/N; alike over 20 000 km/N.',
+      ),
+    },
+  ),
   'levelled-from': object(
     'levelled-from',
     'W = W(site) − g·dH.',

@@ -68,6 +68,8 @@ function schemaOf(descriptor: Descriptor, key: string, definitions: Definitions)
       const piece = schemaOf(descriptor.piece, key, definitions);
       return { anyOf: [schemaOf(descriptor.single, key, definitions), piece, { type: 'array', items: piece }] };
     }
+    case 'shorthand':
+      return { anyOf: [{ type: 'string' }, schemaOf(descriptor.object, key, definitions)] };
     case 'angle': {
       const [minimum, maximum] = descriptor.axis === 'latitude' ? [-90, 90] : [-180, 360];
       return { type: ['number', 'string'], minimum, maximum };
@@ -168,6 +170,7 @@ const quantitySchema = (descriptor: QuantityDescriptor, key: string, definitions
       type: 'object',
       ...membersSchema(key, quantityKeys(descriptor), definitions),
       ...(descriptor.sizesError ? {} : { not: { required: ['source', 'parts'] } }),
+      ...(descriptor.grid ? { oneOf: [{ required: ['value'] }, { required: ['grid'] }] } : {}),
     },
   ],
 });

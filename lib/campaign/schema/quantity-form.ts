@@ -33,6 +33,32 @@ const frameKeys = {
   rate: optional(scalar('speed'), 'Rate', 'Vertical rate, m/s; positive upwards.'),
 } as const;
 
+const degreesList = list(number({ min: -540, max: 540 }), { min: 2, max: 4 });
+
+const gridNodes = object('nodes', 'Nodes of a grid round the site, so that the file is not needed.', {
+  lat: required(degreesList, 'Latitudes', 'Latitudes of the nodes, degrees, from the south, evenly spaced.'),
+  lon: required(degreesList, 'Longitudes', 'Longitudes of the nodes, degrees, from the west, evenly spaced.'),
+  values: required(
+    list(list(number(), { min: 2, max: 4 }), { min: 2, max: 4 }),
+    'Values',
+    'Values at the nodes, m: a list per latitude.',
+  ),
+});
+
+const gridKeys = {
+  grid: optional(
+    text(),
+    'Grid',
+    'Geoid or quasigeoid grid (ISG, GTX or GeoTIFF) off which the value is read, in place of value; a file beside the campaign.',
+  ),
+  method: optional(
+    oneOf('bilinear', 'bicubic'),
+    'Interpolation',
+    'bilinear, or bicubic: cubic convolution with a = −1/2. Default: bilinear.',
+  ),
+  nodes: optional(gridNodes, 'Nodes', 'The nodes of the grid round the site, kept so that the file is not needed.'),
+} as const;
+
 /** Keys of the object form of a measured number; `value`, `u` and `unit` are read together, by lib/quantity. */
 export function quantityKeys(descriptor: QuantityDescriptor): Keys {
   const known = made.get(descriptor);
@@ -49,11 +75,12 @@ function makeQuantityKeys(descriptor: QuantityDescriptor): Keys {
   if (descriptor.sizesError) return { ...scalarKeys(scalar(kind)), source };
   const uncertainty = scalar(kind, { min: 0, uncertainty: true, bare: true });
   return {
-    value: required(
+    value: (descriptor.grid ? optional : required)(
       scalar(kind, { bare: true }),
       'Value',
       'A number in the field’s default unit, or a text such as "143.216(8) m".',
     ),
+    ...(descriptor.grid ? gridKeys : {}),
     u: optional(uncertainty, 'u', 'Standard uncertainty, where the value’s text does not carry it.'),
     unit: optional(text(), 'Unit', 'Unit of value and u where they have none of their own.'),
     source,

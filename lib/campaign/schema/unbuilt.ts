@@ -10,11 +10,8 @@ const unbuilt: ReadonlySet<string> = new Set([
   'datum.frame',
   'datum.epoch',
   'normal-height.field',
-  'zeta.grid',
-  'N.grid',
   'measurement.series',
   'determination=normal-orthometric-height',
-  'determination=gravity-model',
 ]);
 
 /** Whether this version computes what a key says. @param name of the object, or the key under which a quantity stands */

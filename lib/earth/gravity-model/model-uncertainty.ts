@@ -5,6 +5,9 @@ import { QuantityRangeError } from '../range-error.js';
 import { coefficientIndex, type GravityModel, MAX_SYNTHESIS_DEGREE } from './gravity-model.js';
 import { columnRecursion, legendreColumn, RECURSION_SCALE, sectorialFactors } from './legendre.js';
 
+/** A point, and the degree to which the series is summed there if it is not that of the others. */
+export type CommissionPoint = EllipsoidalPosition & { readonly maxDegree?: number };
+
 /** Covariance of V between points from the standard deviations of the coefficients, taken as uncorrelated (the file has no more):
  *  cov(V_i, V_j) = Σ_nm (GM/r_i)(GM/r_j)(R²/(r_i·r_j))ⁿ·P̄_nm(i)·P̄_nm(j)·(σ²_C·cos mλ_i·cos mλ_j + σ²_S·sin mλ_i·sin mλ_j).
  *  One pass over the coefficients for all points.
@@ -12,7 +15,7 @@ import { columnRecursion, legendreColumn, RECURSION_SCALE, sectorialFactors } fr
  * @throws {CampaignError} `no-sigmas`: the file carries no standard deviations */
 export function commissionCovariance(
   model: GravityModel,
-  positions: readonly EllipsoidalPosition[],
+  positions: readonly CommissionPoint[],
   maxDegree: number = model.maxDegree,
   onProgress?: (share: number) => void,
 ): Float64Array {
@@ -27,19 +30,22 @@ export function commissionCovariance(
       ),
     ]);
   const most = Math.min(model.maxDegree, MAX_SYNTHESIS_DEGREE);
-  if (!Number.isInteger(maxDegree) || maxDegree < 0 || maxDegree > most)
-    throw new QuantityRangeError('maxDegree', maxDegree, `a whole number from 0 to ${most}`);
-  const points = positions.map((p) => new PointFunctions(model, p, maxDegree));
+  const degrees = positions.map((p) => p.maxDegree ?? maxDegree);
+  for (const degree of degrees)
+    if (!Number.isInteger(degree) || degree < 0 || degree > most)
+      throw new QuantityRangeError('maxDegree', degree, `a whole number from 0 to ${most}`);
+  const points = positions.map((p, i) => new PointFunctions(model, p, degrees[i]!));
   const count = points.length;
+  const highest = Math.max(0, ...degrees);
   const covariance = new Float64Array(count * count);
-  const a = new Float64Array(maxDegree + 1);
-  const b = new Float64Array(maxDegree + 1);
-  const sectorial = sectorialFactors(maxDegree);
-  const cosineVariance = new Float64Array(maxDegree + 1);
-  const sineVariance = new Float64Array(maxDegree + 1);
-  for (let m = 0; m <= maxDegree; m++) {
-    columnRecursion(m, maxDegree, a, b);
-    for (let n = m; n <= maxDegree; n++) {
+  const a = new Float64Array(highest + 1);
+  const b = new Float64Array(highest + 1);
+  const sectorial = sectorialFactors(highest);
+  const cosineVariance = new Float64Array(highest + 1);
+  const sineVariance = new Float64Array(highest + 1);
+  for (let m = 0; m <= highest; m++) {
+    columnRecursion(m, highest, a, b);
+    for (let n = m; n <= highest; n++) {
       const k = coefficientIndex(n, m);
       cosineVariance[n] = cosineSigma[k]! ** 2;
       sineVariance[n] = sineSigma[k]! ** 2;
@@ -48,7 +54,7 @@ export function commissionCovariance(
     for (let i = 0; i < count; i++)
       for (let j = 0; j <= i; j++)
         covariance[i * count + j]! += productOfOrder(points[i]!, points[j]!, m, cosineVariance, sineVariance);
-    onProgress?.((m + 1) / (maxDegree + 1));
+    onProgress?.((m + 1) / (highest + 1));
   }
   for (let i = 0; i < count; i++) for (let j = 0; j < i; j++) covariance[j * count + i] = covariance[i * count + j]!;
   return covariance;
@@ -84,7 +90,7 @@ class PointFunctions {
 
   nextOrder(m: number, a: Float64Array, b: Float64Array, sectorial: number): void {
     if (m > 0) this.#power *= this.#uq;
-    this.vanishes = this.#power === 0;
+    this.vanishes = this.#power === 0 || m > this.#maxDegree;
     if (this.vanishes) return;
     this.cosM = Math.cos(m * this.#longitudeRad);
     this.sinM = Math.sin(m * this.#longitudeRad);
@@ -104,7 +110,8 @@ function productOfOrder(
   const y = b.values;
   let c = 0;
   let s = 0;
-  for (let n = m; n < x.length; n++) {
+  const end = Math.min(x.length, y.length);
+  for (let n = m; n < end; n++) {
     const p = x[n]! * y[n]!;
     c += p * cosineVariance[n]!;
     s += p * sineVariance[n]!;

@@ -455,10 +455,29 @@ export const CASES: readonly Case[] = [
     expected: '"potential"',
   },
   {
-    code: 'not-built',
-    path: 'sites.a.determinations.1.kind',
-    at: '"gravity-model"',
+    code: 'missing-key',
+    path: 'sites.a.determinations.1.model',
+    at: '{ "kind": "gravity-model"',
     change: det('{ "kind": "gravity-model" }'),
+    expected: '"model"',
+  },
+  {
+    code: 'file-not-at-hand',
+    path: 'sites.a.determinations.1.model',
+    at: '"field.gfc"',
+    change: det('{ "kind": "gravity-model", "model": "field.gfc" }'),
+  },
+  {
+    code: 'file-not-at-hand',
+    path: 'sites.a.determinations.1.model',
+    at: '{ "file"',
+    change: det('{ "kind": "gravity-model", "model": { "file": "field.gfc", "maxDegree": 360 } }'),
+  },
+  {
+    code: 'out-of-range',
+    path: 'sites.a.determinations.1.model.maxDegree',
+    at: '1',
+    change: det('{ "kind": "gravity-model", "model": { "file": "field.gfc", "maxDegree": 1 } }'),
   },
   {
     code: 'unknown-key',
@@ -487,9 +506,9 @@ export const CASES: readonly Case[] = [
     expected: '"length" beside "b"',
   },
   {
-    code: 'not-built',
+    code: 'file-not-at-hand',
     path: 'sites.a.determinations.0.zeta.grid',
-    at: '"grid"',
+    at: '"file.isg"',
     change: { a: PARTS.a.replace('"43.812(19) m"', '{ "grid": "file.isg", "u": "19 mm" }') },
   },
   // instruments and measurements

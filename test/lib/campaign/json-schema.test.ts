@@ -62,7 +62,7 @@ describe('campaignJsonSchema', () => {
         keys++;
         expect(property['title'], key).toMatch(/\S/);
         expect(property['description'], key).toMatch(/\S/);
-        expect(['position', 'frame', 'epoch', 'grid', 'series', 'field']).not.toContain(key);
+        expect(['position', 'frame', 'epoch', 'series', 'field']).not.toContain(key);
       }
       for (const inner of Object.values(node)) visit(inner);
     };
