@@ -2,12 +2,14 @@
 import './campaign/plumb-campaign.define.js';
 import './floors/plumb-floors.define.js';
 import './links/plumb-links.define.js';
+import './network/plumb-network.define.js';
 import './pair/plumb-pair.define.js';
 
 export { version } from '../lib/constants/version.js';
 export { PlumbCampaign } from './campaign/plumb-campaign.js';
 export { PlumbFloors } from './floors/plumb-floors.js';
 export { PlumbLinks } from './links/plumb-links.js';
+export { PlumbNetwork } from './network/plumb-network.js';
 export { PlumbPair } from './pair/plumb-pair.js';
 export { PlumbElement } from './plumb-element.js';
 export type { PlumbChange } from './shared/article-element.js';

@@ -14,7 +14,8 @@ export class WidthController implements ReactiveController {
   /** px; on paper that of a sheet of A4 */
   width = UNKNOWN_PX;
   readonly #host: ReactiveControllerHost & HTMLElement;
-  readonly #observer = new ResizeObserver(() => this.#measure());
+  // in the next frame: drawing anew changes the height, which must not be told while widths are still being told
+  readonly #observer = new ResizeObserver(() => requestAnimationFrame(this.#measure));
 
   constructor(host: ReactiveControllerHost & HTMLElement) {
     this.#host = host;
