@@ -145,6 +145,13 @@ function planWarnings({ model }: SolvedCampaign, link: Link, plan: LinkPlan): Wa
         message: `the intervals leave ${pieces} unbroken stretches, segments says ${link.segments}: each stretch brings the phase noise of its two ends, so that its part of uStat² is ${sizeText(pieces / link.segments)} times what is used. State "segments": ${pieces}.`,
       });
   }
+  if (link.transported)
+    warnings.push({
+      code: 'transported-clock',
+      path: `links.${link.id}.transported`,
+      message:
+        'the plan counts the systematics of both clocks whole; what cancels side by side is in plumbtick transported.',
+    });
   const { bridged, window } = plan;
   if (bridged?.window && window && bridged.window.uStat > window.uStat)
     warnings.push({

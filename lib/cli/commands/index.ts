@@ -15,6 +15,7 @@ import { predict } from './predict.js';
 import { series } from './series.js';
 import { startingValues } from './starting-values.js';
 import { tide } from './tide.js';
+import { transported } from './transported.js';
 
 /** Every command, in the order of the help. */
 export const commands: readonly Command[] = [
@@ -25,6 +26,7 @@ export const commands: readonly Command[] = [
   predict,
   plan,
   breakEven,
+  transported,
   startingValues,
   evaluate,
   compare,
