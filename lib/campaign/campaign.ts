@@ -3,6 +3,7 @@ import type { FibreNoise } from '../clocks/fibre-noise.js';
 import type { OceanLoadingConstituent } from '../earth/earth-tide/ocean-loading.js';
 import type { PolePosition } from '../earth/earth-tide/pole-tide.js';
 import type { GridExcerpt, InterpolationMethod } from '../earth/geoid-grid/interpolation.js';
+import type { StatedPosition } from '../earth/projected-position/resolve-position.js';
 import type { TideSystem } from '../earth/tide-system.js';
 import type { Radians } from '../quantity/radians.js';
 
@@ -187,6 +188,9 @@ export type Determination = DeterminationCommon &
 
 export type DeterminationKind = Determination['kind'];
 
+/** A place as its user states it, in coordinates of another system; latitude and longitude come from it. */
+export interface SitePosition extends Remarks, StatedPosition {}
+
 export interface Site extends Remarks {
   readonly id: string;
   readonly name?: string;
@@ -194,6 +198,8 @@ export interface Site extends Remarks {
   readonly latitudeRad: Radians;
   /** geodetic, east positive */
   readonly longitudeRad: Radians;
+  /** what latitude and longitude were computed from; absent where they were stated */
+  readonly position?: SitePosition;
   readonly h: Measured | null;
   /** gravity at the marker */
   readonly g: Measured | null;
@@ -202,7 +208,7 @@ export interface Site extends Remarks {
   /** loading, groundwater, air: added to W of the site's clocks, m²/s² */
   readonly variable: Measured | null;
   /** load of the ocean tide as felt at the site, by constituent; an empty list states that there is none */
-  readonly oceanLoading?: readonly OceanLoadingConstituent[];
+  readonly oceanLoading?: readonly (Remarks & OceanLoadingConstituent)[];
   readonly determinations: readonly Determination[];
   readonly candidate: boolean;
   readonly cost: number | null;
@@ -279,6 +285,23 @@ export interface TransportedClock extends Remarks {
   readonly sideBySide: readonly SideBySide[];
 }
 
+/** A point that a signal or a moved clock passes. */
+export interface RoutePoint extends Remarks {
+  readonly latitudeRad: Radians;
+  readonly longitudeRad: Radians;
+  /** above sea level, or of a satellite, m */
+  readonly heightM: number;
+  readonly timeMs: number | null;
+}
+
+/** The way between the two clocks of a link. */
+export interface Route extends Remarks {
+  readonly via: readonly RoutePoint[];
+  /** when a moved clock leaves and arrives; null for a signal */
+  readonly departureMs: number | null;
+  readonly arrivalMs: number | null;
+}
+
 export interface Link extends Instrument {
   /** clock ids; y is the offset of `to` seen from `from` */
   readonly from: string;
@@ -287,6 +310,7 @@ export interface Link extends Instrument {
   readonly lengthM: number | null;
   /** unbroken stretches of the link */
   readonly segments: number;
+  readonly route?: Route;
   readonly fibre?: LinkFibre;
   readonly transported?: TransportedClock;
 }
@@ -346,7 +370,7 @@ export interface Campaign extends Remarks {
   readonly effectM: number | null;
   readonly love: Remarks & { readonly h2: number; readonly k2: number };
   /** coordinates of the pole in order of time, or one position for all times */
-  readonly pole?: readonly PolePosition[];
+  readonly pole?: readonly (Remarks & PolePosition)[];
   /** decimal year at which the potentials are wanted; heights with a rate are brought to it */
   readonly epochYear?: number;
   readonly sources: readonly Source[];

@@ -12,6 +12,7 @@ import type {
   Measured,
   Measurement,
   Remarks,
+  Route,
   Site,
   Source,
   Stability,
@@ -19,6 +20,7 @@ import type {
   Transition,
   TransportedClock,
 } from './campaign.js';
+import { fromPole, fromSitePosition, heightIsOfPosition, positionHolds } from './places.js';
 import type {
   campaignSchema,
   correlation,
@@ -32,6 +34,7 @@ import type {
 import type { ReadOf } from './schema/descriptor.js';
 import type { determination } from './schema/determinations.js';
 import type { clock, interval, link } from './schema/instruments.js';
+import type { oceanLoading, route } from './schema/places.js';
 
 /** The entries that say something: neither null, undefined, false nor an empty list. */
 type Told<T> = { [K in keyof T]?: Exclude<T[K], null | undefined | false> };
@@ -149,12 +152,36 @@ function fromDetermination(d: Determination): ReadOf<typeof determination> {
   }
 }
 
+const fromOceanLoading = (o: NonNullable<Site['oceanLoading']>[number]): ReadOf<typeof oceanLoading> => ({
+  constituent: o.constituent,
+  amplitude: o.amplitudeM2s2,
+  phase: degreesOf(o.phaseLagRad as Radians),
+  ...remarksOf(o),
+});
+
+const fromRoute = (r: Route): ReadOf<typeof route> => ({
+  ...told({
+    via: r.via.map((p) => ({
+      lat: degreesOf(p.latitudeRad),
+      lon: degreesOf(p.longitudeRad),
+      ...(p.heightM === 0 ? {} : { height: p.heightM }),
+      ...(p.timeMs === null ? {} : { time: p.timeMs }),
+      ...remarksOf(p),
+    })),
+  }),
+  ...(r.departureMs === null ? {} : { departure: r.departureMs }),
+  ...(r.arrivalMs === null ? {} : { arrival: r.arrivalMs }),
+  ...remarksOf(r),
+});
+
 const fromSite = (s: Site): ReadOf<typeof site> => ({
   id: s.id,
   ...told({ name: s.name }),
-  lat: degreesOf(s.latitudeRad),
-  lon: degreesOf(s.longitudeRad),
-  ...told({ h: s.h, g: s.g, gradient: s.gradient, variable: s.variable }),
+  ...(s.position && positionHolds(s)
+    ? { position: fromSitePosition(s.position) }
+    : { lat: degreesOf(s.latitudeRad), lon: degreesOf(s.longitudeRad) }),
+  ...told({ h: heightIsOfPosition(s) ? null : s.h, g: s.g, gradient: s.gradient, variable: s.variable }),
+  ...(s.oceanLoading === undefined ? {} : { oceanLoading: s.oceanLoading.map(fromOceanLoading) }),
   ...(s.determinations.length > 0 ? { determinations: s.determinations.map(fromDetermination) } : {}),
   ...candidateOf(s),
   ...remarksOf(s),
@@ -267,6 +294,7 @@ const fromLink = (l: Link): ReadOf<typeof link> => ({
   ...(l.lengthM === null ? {} : { length: l.lengthM }),
   ...(l.segments === 1 ? {} : { segments: l.segments }),
   ...fromInstrument(l),
+  ...(l.route ? { route: fromRoute(l.route) } : {}),
   ...(l.fibre ? { fibre: fromFibre(l.fibre) } : {}),
   ...(l.transported ? { transported: fromTransported(l.transported) } : {}),
 });
@@ -299,6 +327,8 @@ export function fromCampaign(c: Campaign): ReadOf<typeof campaignSchema> {
     ...(c.window ? { window: fromInterval(c.window) } : {}),
     ...told({ target: c.targetM, effect: c.effectM }),
     love: c.love,
+    ...(c.epochYear === undefined ? {} : { epoch: c.epochYear }),
+    ...(c.pole ? { pole: fromPole(c.pole) } : {}),
     ...told({
       sources: c.sources.map(fromSource),
       datums: c.datums.map(fromDatum),

@@ -23,6 +23,7 @@ import type {
   Transition,
   TransportedClock,
 } from './campaign.js';
+import { toOceanLoading, toPlace, toPole, toRoute } from './places.js';
 import type {
   campaignSchema,
   correlation,
@@ -150,12 +151,11 @@ function toDetermination(d: ReadOf<typeof determination>): Determination {
 const toSite = (s: ReadOf<typeof site>): Site => ({
   ...remarksOf(s),
   ...keep(s, 'id', 'name'),
-  latitudeRad: degToRad(s.lat),
-  longitudeRad: degToRad(s.lon),
-  h: s.h ?? null,
+  ...toPlace(s),
   g: s.g ?? null,
   gradient: s.gradient ?? null,
   variable: s.variable ?? null,
+  ...(s.oceanLoading === undefined ? {} : { oceanLoading: toOceanLoading(s.oceanLoading) }),
   determinations: (s.determinations ?? []).map(toDetermination),
   candidate: s.candidate ?? false,
   cost: s.cost ?? null,
@@ -263,6 +263,7 @@ const toLink = (
   kind: l.kind ?? null,
   lengthM: l.length ?? null,
   segments: l.segments ?? 1,
+  ...(l.route === undefined ? {} : { route: toRoute(l.route) }),
   ...(l.fibre === undefined ? {} : { fibre: toFibre(l.fibre, l.length, () => geodesicM(l.from, l.to)) }),
   ...(l.transported === undefined ? {} : { transported: toTransported(l.transported) }),
 });
@@ -323,6 +324,8 @@ export function toCampaign(file: ReadOf<typeof campaignSchema>): Campaign {
     targetM: file.target ?? null,
     effectM: file.effect ?? null,
     love: { ...remarksOf(file.love ?? {}), h2: file.love?.h2 ?? LOVE_NUMBERS.h2, k2: file.love?.k2 ?? LOVE_NUMBERS.k2 },
+    ...(file.epoch === undefined ? {} : { epochYear: file.epoch }),
+    ...(file.pole === undefined ? {} : { pole: toPole(file.pole) }),
     sources: (file.sources ?? []).map(toSource),
     datums: (file.datums ?? []).map(toDatum),
     transitions: (file.transitions ?? []).map(toTransition),

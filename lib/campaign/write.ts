@@ -70,7 +70,7 @@ function quantityOf(kind: QuantityKind, m: Measured): Json {
     ...(m.dof === null ? {} : { dof: m.dof }),
     ...(m.frame === undefined ? {} : { frame: m.frame }),
     ...(m.epochYear === undefined ? {} : { epoch: m.epochYear }),
-    ...(m.rateMPerS === undefined ? {} : { rate: m.rateMPerS }),
+    ...(m.rate === undefined ? {} : { rate: quantityOf('speed', m.rate) }),
     ...(m.source === undefined ? {} : { source: m.source }),
     ...(m.note === undefined ? {} : { note: m.note }),
     ...(m.reference === undefined ? {} : { reference: m.reference }),

@@ -12,6 +12,7 @@ import { tieFunction } from './determination-functions.js';
 import { determinationObservation } from './determination-observations.js';
 import { datumOfGeopotentialNumber } from './first-determination.js';
 import { gravityModelSources } from './gravity-model-sources.js';
+import { HeightReductions } from './height-reductions.js';
 import type { FrequencyInputs, Model } from './model.js';
 import {
   DEFAULT_GRAVITY_SOURCE,
@@ -29,6 +30,7 @@ import { TideConverter } from './tide-labels.js';
 export function buildModel(campaign: Campaign): Model {
   const register = new InputRegister();
   const tide = new TideConverter(campaign);
+  const heights = new HeightReductions(campaign);
   const datums = new ReferencePotentials(campaign, register, tide);
   const warnings: Warning[] = [];
   const siteIndex = new Map(campaign.sites.map((s, i) => [s.id, i]));
@@ -38,7 +40,7 @@ export function buildModel(campaign: Campaign): Model {
     g: registerSiteGravity(register, campaign, site, warnings),
     gradient: registerSiteGradient(register, site),
   }));
-  const context = { campaign, register, tide, datums, siteInputs, siteIndex };
+  const context = { campaign, register, tide, heights, datums, siteInputs, siteIndex };
   const determinations = campaign.sites.flatMap((site, s) =>
     site.determinations.map((_, n) => determinationObservation(context, s, n)),
   );
@@ -93,7 +95,7 @@ export function buildModel(campaign: Campaign): Model {
     siteIndex,
     clockIndex,
     toMeanTideM2s2,
-    warnings: [...tide.warnings, ...warnings],
+    warnings: [...tide.warnings, ...heights.warnings, ...warnings],
   };
 }
 

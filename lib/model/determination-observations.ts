@@ -2,6 +2,7 @@ import type { Campaign, Determination, Measured, Site } from '../campaign/campai
 import { CampaignError, faultAt } from '../campaign/fault.js';
 import { GRS80 } from '../earth/level-ellipsoid.js';
 import { normalGravity } from '../earth/normal-field.js';
+import { readNormalHeightField } from '../earth/normal-height-field.js';
 import { degToRad } from '../quantity/radians.js';
 import type { InputRegister } from '../uncertainty/inputs.js';
 import type { ReferencePotentials } from './datums.js';
@@ -16,9 +17,12 @@ import {
   potentialFunction,
 } from './determination-functions.js';
 import { commissionSource, omissionSourceId } from './gravity-model-sources.js';
+import type { HeightReduction, HeightReductions } from './height-reductions.js';
 import { levelledDifference } from './levelling-line.js';
 import type { DeterminationObservation, SiteInputs } from './model.js';
 import { atEstimates, type ModelFunction } from './model-function.js';
+import { type MovingArgument, withMotion } from './moved-height.js';
+import { normalHeightOfFieldFunction } from './normal-height-of-field.js';
 import { placeOfSite, registerMeanGravityFactor, registerMeasured } from './site-inputs.js';
 import type { TideConverter } from './tide-labels.js';
 
@@ -27,6 +31,7 @@ export interface DeterminationContext {
   readonly campaign: Campaign;
   readonly register: InputRegister;
   readonly tide: TideConverter;
+  readonly heights: HeightReductions;
   readonly datums: ReferencePotentials;
   readonly siteInputs: readonly SiteInputs[];
   readonly siteIndex: ReadonlyMap<string, number>;
@@ -56,6 +61,15 @@ export function determinationObservation(
   };
 }
 
+/** The rate of a height, as an input, and the seconds over which it acts. */
+type Motion = { readonly rate: number; readonly seconds: number } | null;
+
+/** Which argument of its function a physical height is, where it stands beside W0 alone. */
+const PHYSICAL_HEIGHT = 1;
+
+const moving = (heights: readonly (readonly [argument: number, motion: Motion])[]): MovingArgument[] =>
+  heights.flatMap(([argument, motion]) => (motion === null ? [] : [{ argument, ...motion }]));
+
 function determinationFunction(
   context: DeterminationContext,
   site: Site,
@@ -63,11 +77,13 @@ function determinationFunction(
   d: Determination,
   path: string,
 ): ModelFunction {
-  const { campaign, register, tide, datums } = context;
+  const { campaign, register, tide, heights, datums } = context;
   const place = placeOfSite(site);
   const own = (key: string, measured: Measured) => registerMeasured(register, `${path}.${key}`, measured, place);
   /** a quantity of the determination itself, or else the site's */
-  const height = (): { readonly input: number; readonly shiftM: number } => {
+  const height = (
+    surface: Measured | null,
+  ): { readonly input: number; readonly shiftM: number; readonly motion: Motion } => {
     const stated = 'h' in d && d.h ? d.h : null;
     const measured = stated ?? site.h;
     const at = stated ? `${path}.h` : `sites.${site.id}.h`;
@@ -75,11 +91,22 @@ function determinationFunction(
       throw new CampaignError([
         faultAt('missing', `${path}.h`, 'no h here or at the site', 'an ellipsoidal height "h"'),
       ]);
+    const reduction = heights.ellipsoidal(measured, at, site, surface, 'datum' in d ? d.datum : null);
     return {
       input: registerMeasured(register, at, measured, place),
-      shiftM: tide.shift('ellipsoidal-height', measured, at, site.latitudeRad),
+      shiftM: tide.shift('ellipsoidal-height', measured, at, site.latitudeRad) + reduction.shiftM,
+      motion: motionOf(reduction, measured, at),
     };
   };
+  /** the rate of a height as an input, if it acts */
+  const motionOf = ({ motionS }: HeightReduction, { rate }: Measured, at: string): Motion =>
+    rate === undefined || motionS === 0
+      ? null
+      : { rate: registerMeasured(register, `${at}.rate`, rate, place), seconds: motionS };
+  const physicalMotion = (H: Measured, datum: string): readonly MovingArgument[] =>
+    moving([[PHYSICAL_HEIGHT, motionOf(heights.physical(H, `${path}.H`, datum), H, `${path}.H`)]]);
+  const surfaceMotion = (measured: Measured, key: string): Motion =>
+    motionOf(heights.surface(measured, `${path}.${key}`), measured, `${path}.${key}`);
   const gravity = () => ('g' in d && d.g ? own('g', d.g) : context.siteInputs[siteIndex]!.g);
   /** C and H refer to the datum's benchmark: their tide is that at the site minus that at the origin */
   const physicalShift = (
@@ -97,7 +124,7 @@ function determinationFunction(
     case 'potential':
       return potentialFunction(own('W', d.W), tide.shift('potential', d.W, `${path}.W`, site.latitudeRad));
     case 'gravity-model': {
-      const h = height();
+      const h = height(null);
       const error = (key: 'commission' | 'omission', u: number, source: string) =>
         register.indexOf(`${path}.${key}`, () => ({
           value: 0,
@@ -108,14 +135,17 @@ function determinationFunction(
           dof: null,
         }));
       const { atMarker, model } = d;
-      return gravityModelFunction(
-        {
-          h: h.input,
-          commission: error('commission', atMarker.commissionM2s2, commissionSource(campaign, d)),
-          omission: error('omission', atMarker.omissionM2s2, omissionSourceId(model.file, atMarker.maxDegree)),
-        },
-        atMarker,
-        h.shiftM,
+      return withMotion(
+        gravityModelFunction(
+          {
+            h: h.input,
+            commission: error('commission', atMarker.commissionM2s2, commissionSource(campaign, d)),
+            omission: error('omission', atMarker.omissionM2s2, omissionSourceId(model.file, atMarker.maxDegree)),
+          },
+          atMarker,
+          h.shiftM,
+        ),
+        moving([[0, h.motion]]),
       );
     }
     case 'geopotential-number': {
@@ -128,39 +158,53 @@ function determinationFunction(
     case 'normal-height':
     case 'normal-orthometric-height': {
       const { input, shiftM2s2 } = datums.fitted(d.datum);
-      return normalHeightFunction(site.latitudeRad, input, own('H', d.H), null, {
-        W0M2s2: shiftM2s2,
-        HM: physicalShift('physical-height', 'H', d.H, d.datum),
-      });
+      const shift = { W0M2s2: shiftM2s2, HM: physicalShift('physical-height', 'H', d.H, d.datum) };
+      if (d.kind === 'normal-orthometric-height') heights.noteNormalOrthometric(d.H, `${path}.H`, site);
+      const field = d.kind === 'normal-height' && d.field !== undefined ? readNormalHeightField(d.field) : null;
+      const f =
+        field === null || field.id === 'GRS80'
+          ? normalHeightFunction(site.latitudeRad, input, own('H', d.H), null, shift)
+          : normalHeightOfFieldFunction(field, site.latitudeRad, input, own('H', d.H), shift);
+      return withMotion(f, physicalMotion(d.H, d.datum));
     }
     case 'orthometric-height': {
       const { input, shiftM2s2 } = datums.fitted(d.datum);
-      return orthometricHeightFunction(input, gravity(), own('H', d.H), {
+      const f = orthometricHeightFunction(input, gravity(), own('H', d.H), {
         W0M2s2: shiftM2s2,
         HM: physicalShift('physical-height', 'H', d.H, d.datum),
       });
+      const motion = motionOf(heights.physical(d.H, `${path}.H`, d.datum), d.H, `${path}.H`);
+      return withMotion(f, moving([[2, motion]]));
     }
     case 'dynamic-height': {
       const { input, shiftM2s2 } = datums.fitted(d.datum);
       const gamma = d.gammaRef
         ? { input: own('gammaRef', d.gammaRef) }
         : { exactMs2: normalGravity(GRS80, degToRad(45), 0) };
-      return dynamicHeightFunction(input, own('H', d.H), gamma, {
+      const f = dynamicHeightFunction(input, own('H', d.H), gamma, {
         W0M2s2: shiftM2s2,
         HM: physicalShift('physical-height', 'H', d.H, d.datum),
       });
+      return withMotion(f, physicalMotion(d.H, d.datum));
     }
     case 'gnss-quasigeoid': {
-      const h = height();
+      const h = height(d.zeta);
       // for a (quasi)geoid model W0 is a number, the potential to which its zero-degree term refers: no benchmark, no tide
-      return normalHeightFunction(site.latitudeRad, datums.asNumber(d.datum), h.input, own('zeta', d.zeta), {
+      const f = normalHeightFunction(site.latitudeRad, datums.asNumber(d.datum), h.input, own('zeta', d.zeta), {
         W0M2s2: 0,
         HM: h.shiftM - tide.shift('geoid-height', d.zeta, `${path}.zeta`, site.latitudeRad),
       });
+      return withMotion(
+        f,
+        moving([
+          [1, h.motion],
+          [2, surfaceMotion(d.zeta, 'zeta')],
+        ]),
+      );
     }
     case 'gnss-geoid': {
-      const h = height();
-      return gnssGeoidFunction(
+      const h = height(d.N);
+      const f = gnssGeoidFunction(
         {
           W0: datums.asNumber(d.datum),
           h: h.input,
@@ -171,6 +215,13 @@ function determinationFunction(
             : registerMeanGravityFactor(register, site),
         },
         { W0M2s2: 0, HM: h.shiftM - tide.shift('geoid-height', d.N, `${path}.N`, site.latitudeRad) },
+      );
+      return withMotion(
+        f,
+        moving([
+          [1, h.motion],
+          [2, surfaceMotion(d.N, 'N')],
+        ]),
       );
     }
     case 'levelled-from': {

@@ -1,12 +1,34 @@
-import { formatLength } from '../../quantity/index.js';
+import { formatLength, radToDeg } from '../../quantity/index.js';
 import type { Campaign } from '../campaign.js';
 import type { Warning } from '../fault.js';
 import { quoted } from '../json-text.js';
+import { heightIsOfPosition, readSitePosition } from '../places.js';
 
 /** What was put in for something that the file leaves open and that enters a result. */
 export function assumptions(campaign: Campaign): Warning[] {
-  return [...geodesicFibres(campaign), ...linesWithoutSource(campaign)];
+  return [...convertedPositions(campaign), ...geodesicFibres(campaign), ...linesWithoutSource(campaign)];
 }
+
+/** What became of a position in another system, and what is doubtful about it. */
+const convertedPositions = ({ sites }: Campaign): Warning[] =>
+  sites.flatMap((site) => {
+    if (site.position === undefined) return [];
+    const path = `sites.${site.id}.position`;
+    const read = readSitePosition(site.position);
+    if (!read.ok) return [];
+    const { latitudeRad, longitudeRad, heightM, steps, cautions } = read.position;
+    const place = `${radToDeg(latitudeRad).toFixed(7)}°, ${radToDeg(longitudeRad).toFixed(7)}°`;
+    const height =
+      heightM === null
+        ? ''
+        : heightIsOfPosition(site)
+          ? `; h = ${heightM.toFixed(4)} m out of it is taken as exact and tide-free: state h of the site with its uncertainty and tide system`
+          : `; the h out of it, ${heightM.toFixed(4)} m, is not used, for the site states its own`;
+    return [
+      { code: 'position-converted', path, message: `${steps}: ${place}${height}.` },
+      ...cautions.map(({ code, message }) => ({ code, path, message })),
+    ];
+  });
 
 const geodesicFibres = ({ links }: Campaign): Warning[] =>
   links.flatMap(({ id, fibre }) =>

@@ -5,6 +5,7 @@ import type { JsonNode } from '../json-tree.js';
 import type { campaignSchema, correlation, measurement, site, transition } from '../schema/campaign-schema.js';
 import type { ReadOf } from '../schema/descriptor.js';
 import type { clock, link } from '../schema/instruments.js';
+import { checkOceanLoading, checkPole, checkPosition, checkRoute } from './place-checks.js';
 import type { Origin, Reading } from './reading.js';
 import { checkReferences, checkSources } from './references.js';
 
@@ -17,13 +18,19 @@ export function checkCampaign(file: Readable<ReadOf<typeof campaignSchema>>, rea
   checkSources(file.sources ?? [], reading.uses);
   for (const s of file.sites ?? []) {
     checkHeights(s, reading);
+    checkPosition(s, reading);
+    checkOceanLoading(s, reading);
     checkLines(s, reading);
   }
   for (const c of file.clocks ?? []) checkFlywheel(c, reading);
-  for (const l of file.links ?? []) checkLink(l, reading);
+  for (const l of file.links ?? []) {
+    checkLink(l, reading);
+    if (l.route !== undefined) checkRoute(l.route, reading);
+  }
   for (const t of file.transitions ?? []) checkTransition(t, reading);
   for (const m of file.measurements ?? []) checkMeasurement(m, reading);
   checkCorrelations(file.correlations ?? [], reading);
+  checkPole(file.pole ?? [], reading);
 }
 
 const member = ({ node }: Origin, key: string): JsonNode =>
@@ -31,7 +38,8 @@ const member = ({ node }: Origin, key: string): JsonNode =>
 
 /** A GNSS height is the determination's own or the site's; nothing stands in for it. */
 function checkHeights(s: Readable<ReadOf<typeof site>>, reading: Reading): void {
-  if (member(reading.originOf(s), 'h') !== reading.originOf(s).node) return;
+  // geocentric coordinates hold a height
+  if (member(reading.originOf(s), 'h') !== reading.originOf(s).node || s.position?.z !== undefined) return;
   for (const d of s.determinations ?? []) {
     if (d.kind !== 'gnss-quasigeoid' && d.kind !== 'gnss-geoid' && d.kind !== 'gravity-model') continue;
     const { context, node } = reading.originOf(d);

@@ -41,13 +41,30 @@ export function readObject<K extends Keys>(
     } else if (required && !node.members.has(key) && isComplete())
       context.member(key).refuse(node, 'missing-key', `${quoted(key)}: ${help}`, 'nothing');
   }
+  if (isComplete()) checkAlternatives(descriptor, node, context);
   checkPairs(descriptor, node, result, context);
   context.reading.remember(result, { node, context });
   return result as ReadOf<ObjectDescriptor<K>>;
 }
 
-function requiredKeys({ keys }: ObjectDescriptor<Keys>): string {
-  const needed = Object.keys(keys).filter((key) => keys[key]?.required);
+/** One of several sets of keys has to stand whole. Of the one that was begun, else of the first, the missing keys are named. */
+function checkAlternatives({ alternatives, keys }: ObjectDescriptor<Keys>, node: JsonObject, context: Context): void {
+  const isWhole = (set: readonly string[]) => set.every((key) => node.members.has(key));
+  const [first] = alternatives;
+  if (first === undefined || alternatives.some(isWhole)) return;
+  const begun = alternatives.find((set) => set.some((key) => node.members.has(key)));
+  const others = alternatives
+    .filter((set) => set !== (begun ?? first))
+    .map((set) => set.map((k) => quoted(k)).join(', '));
+  for (const key of begun ?? first)
+    if (!node.members.has(key)) {
+      const instead = begun === undefined ? `; or ${others.join('; or ')}` : '';
+      context.member(key).refuse(node, 'missing-key', `${quoted(key)}: ${keys[key]?.help}${instead}`, 'nothing');
+    }
+}
+
+function requiredKeys({ keys, alternatives }: ObjectDescriptor<Keys>): string {
+  const needed = [...Object.keys(keys).filter((key) => keys[key]?.required), ...(alternatives[0] ?? [])];
   return (needed.length > 0 ? needed : Object.keys(keys).slice(0, 3)).map((key) => quoted(key)).join(', ');
 }
 

@@ -13,12 +13,13 @@ import { idFault } from './identifier.js';
 import { suggestion } from './keys.js';
 import { isInRange, rangeInWords } from './range.js';
 
-export function readText({ known }: TextDescriptor, node: JsonNode, context: Context): string | undefined {
+export function readText({ known, check }: TextDescriptor, node: JsonNode, context: Context): string | undefined {
   if (node.type !== 'string')
     return context.refuse(node, 'wrong-type', known ? `a text such as ${quoted(known[0] as string)}` : 'a text');
   // I-JSON, RFC 7493 section 2.1: half a character cannot be written to a file again
   if (/\p{Surrogate}/u.test(node.value)) return context.refuse(node, 'lone-surrogate', 'whole characters');
-  return node.value;
+  const expected = check?.(node.value) ?? null;
+  return expected === null ? node.value : context.refuse(node, 'unknown-name', expected);
 }
 
 export function readId({ list, reserved }: IdDescriptor, node: JsonNode, context: Context): string | undefined {

@@ -131,7 +131,7 @@ export function readPieces<P extends ObjectDescriptor<Keys>>(
 }
 
 type Extras = Partial<
-  Pick<Measured, 'tide' | 'frame' | 'epochYear' | 'rateMPerS' | 'source' | 'note' | 'reference' | 'date'>
+  Pick<Measured, 'tide' | 'frame' | 'epochYear' | 'rate' | 'source' | 'note' | 'reference' | 'date'>
 >;
 
 interface GridExtras extends Extras {
@@ -217,7 +217,7 @@ function nodesAgree(node: JsonNode | undefined, context: Context): boolean {
   return false;
 }
 
-const NAMES: Readonly<Record<string, string>> = { epoch: 'epochYear', rate: 'rateMPerS' };
+const NAMES: Readonly<Record<string, string>> = { epoch: 'epochYear' };
 
 const NO_TIDE = {
   tide: { code: 'tide-not-here', expected: 'no tide label: the permanent tide does not enter this value' },

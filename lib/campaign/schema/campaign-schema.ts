@@ -1,6 +1,5 @@
 import { candidate, datumReference, GRADIENT, GRAVITY, name, POTENTIAL, SMALL_FRACTION, use } from './common.js';
 import {
-  angle,
   boolean,
   id,
   instant,
@@ -16,15 +15,14 @@ import {
   text,
 } from './descriptor.js';
 import { determination } from './determinations.js';
+import { EPOCH, FRAME } from './epoch-and-frame.js';
 import { clock, interval, link } from './instruments.js';
+import { latitude, longitude, oceanLoading, pole, position } from './places.js';
 
 /** Datums that are built in, exact, and cannot be defined again. */
 export const BUILT_IN_DATUMS = datumReference.descriptor.builtIn;
 
 export const CAMPAIGN_FORMAT = 'plumbtick-campaign/1';
-
-const latitude = angle('latitude');
-const longitude = angle('longitude');
 
 export const source = object(
   'source',
@@ -68,8 +66,12 @@ export const datum = object('datum', 'A zero level: the potential that heights a
     'adjust finds the datum’s offset; the stated u of W0 is then left out.',
   ),
   estimateTilt: optional(boolean(), 'Estimate tilt', 'adjust finds the datum’s tilt to north and east.'),
-  frame: optional(text(), 'Frame', 'Terrestrial reference frame of the geoid model.'),
-  epoch: optional(number({ min: 1900, max: 2200 }), 'Epoch', 'Epoch of the frame, decimal years.'),
+  frame: optional(FRAME, 'Frame', 'Terrestrial reference frame of the geoid model.'),
+  epoch: optional(
+    EPOCH,
+    'Epoch',
+    'Epoch of the datum and its geoid model, decimal years: heights with a rate are brought to it.',
+  ),
 });
 
 export const transition = object(
@@ -96,8 +98,9 @@ export const site = object(
   {
     id: required(id('sites'), 'Id', 'Name by which clocks and levelling refer to the site.'),
     name,
-    lat: required(latitude, 'Latitude φ', 'Geodetic latitude, degrees, north positive.'),
-    lon: required(longitude, 'Longitude λ', 'Geodetic longitude, degrees, east positive.'),
+    lat: optional(latitude, 'Latitude φ', 'Geodetic latitude, degrees, north positive.'),
+    lon: optional(longitude, 'Longitude λ', 'Geodetic longitude, degrees, east positive.'),
+    position: optional(position, 'Position', 'In place of lat and lon: a national grid or geocentric coordinates.'),
     h: optional(
       quantity('length', { tide: true, frame: true }),
       'Ellipsoidal height h',
@@ -118,6 +121,11 @@ export const site = object(
       'Variable part',
       'Loading, groundwater and air, m²/s², added to W of the site’s clocks. Default: none.',
     ),
+    oceanLoading: optional(
+      list(oceanLoading),
+      'Ocean loading',
+      'Load of the ocean tide, by constituent; an empty list states that there is none. Used by tide.',
+    ),
     determinations: optional(
       list(determination),
       'Determinations',
@@ -125,7 +133,14 @@ export const site = object(
     ),
     ...candidate,
   },
-  { atSite: true },
+  {
+    atSite: true,
+    alternatives: [['lat', 'lon'], ['position']],
+    exclusive: [
+      ['lat', 'position'],
+      ['lon', 'position'],
+    ],
+  },
 );
 
 export const measurement = object(
@@ -221,6 +236,16 @@ export const campaignSchema = object('campaign', 'A comparison of heights by clo
     }),
     'Love numbers',
     'Default: h₂ = 0.6078, k₂ = 0.30190.',
+  ),
+  epoch: optional(
+    EPOCH,
+    'Epoch',
+    'Decimal year at which the potentials are wanted; heights with a rate are brought to it. Default: the epoch of the datum, else the middle of the window.',
+  ),
+  pole: optional(
+    list(pole, { min: 1 }),
+    'Pole',
+    'Coordinates of the pole through the window, for the pole tide. Used by tide.',
   ),
   sources: optional(list(source), 'Sources', 'Shared error sources.'),
   datums: optional(list(datum, { pathBy: 'id' }), 'Datums', 'Zero levels besides the built-in ones.'),

@@ -17,8 +17,10 @@ export type ListName = 'sources' | 'datums' | 'transitions' | 'sites' | 'clocks'
 /** Free text. */
 export interface TextDescriptor extends Reads<string> {
   readonly type: 'text';
-  /** words with a meaning of their own; any other text is kept too */
+  /** words with a meaning of their own; any other text is kept too, unless `check` refuses it */
   readonly known?: readonly string[];
+  /** what would be right, or null for a good text */
+  readonly check?: (text: string) => string | null;
 }
 
 /** The name of an item of `list`. */
@@ -76,8 +78,10 @@ export interface QuantityDescriptor extends Reads<Measured>, Range {
   readonly kind: QuantityKind;
   /** whether the value depends on the permanent-tide system, so that a label may stand on it */
   readonly tide: boolean;
-  /** whether terrestrial frame, epoch and vertical rate may stand on it */
+  /** whether a terrestrial frame may stand on it, beside epoch and vertical rate */
   readonly frame: boolean;
+  /** whether epoch and vertical rate may stand on it */
+  readonly epoch: boolean;
   /** whether a grid file may stand in place of the value */
   readonly grid: boolean;
   /** the value is itself a standard uncertainty: it has none of its own, and its source is that of the error it sizes */
@@ -143,6 +147,8 @@ export interface ObjectDescriptor<K extends Keys> extends Reads<ReadKeys<K>> {
   readonly name: string;
   readonly help: string;
   readonly keys: K;
+  /** sets of keys of which one has to stand whole */
+  readonly alternatives: readonly (readonly string[])[];
   /** pairs of keys of which at most one may stand */
   readonly exclusive: readonly (readonly [string, string])[];
   /** pairs [a, b]: a may stand only beside b */
@@ -188,7 +194,11 @@ export type Descriptor =
   | ObjectDescriptor<AnyOf>
   | VariantDescriptor<AnyOf>;
 
-export const text = (known?: readonly string[]): TextDescriptor => (known ? { type: 'text', known } : { type: 'text' });
+export const text = (known?: readonly string[], check?: TextDescriptor['check']): TextDescriptor => ({
+  type: 'text',
+  ...(known ? { known } : {}),
+  ...(check ? { check } : {}),
+});
 export const id = (list: ListName, reserved: readonly string[] = []): IdDescriptor => ({ type: 'id', list, reserved });
 export const reference = (list: ListName, builtIn: readonly string[] = []): ReferenceDescriptor => ({
   type: 'reference',
@@ -210,12 +220,13 @@ export const scalar = (kind: QuantityKind, more: Range & { bare?: boolean } = {}
 });
 export const quantity = (
   kind: QuantityKind,
-  more: Range & { tide?: boolean; frame?: boolean; grid?: boolean; sizesError?: boolean } = {},
+  more: Range & { tide?: boolean; frame?: boolean; epoch?: boolean; grid?: boolean; sizesError?: boolean } = {},
 ): QuantityDescriptor => ({
   type: 'quantity',
   kind,
   tide: false,
   frame: false,
+  epoch: false,
   grid: false,
   sizesError: false,
   ...more,
@@ -271,6 +282,7 @@ type WithRemarks<K extends Keys> = K & typeof remarks;
 type Pairs<K extends Keys> = readonly (readonly [keyof K & string, keyof K & string])[];
 
 interface ObjectOptions<K extends Keys> extends Partial<Pick<ObjectDescriptor<K>, 'atSite' | 'refused'>> {
+  readonly alternatives?: readonly (readonly (keyof K & string)[])[];
   readonly exclusive?: Pairs<K>;
   readonly needs?: Pairs<K>;
   readonly ordered?: Pairs<K>;
@@ -288,6 +300,7 @@ export const object = <const K extends Keys>(
   name,
   help,
   keys: { ...keys, ...remarks },
+  alternatives: [],
   exclusive: [],
   needs: [],
   ordered: [],

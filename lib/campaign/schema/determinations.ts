@@ -1,3 +1,4 @@
+import { NORMAL_HEIGHT_FIELDS, readNormalHeightField } from '../../earth/normal-height-field.js';
 import { candidate, datumReference, GRADIENT, GRAVITY, POTENTIAL, use } from './common.js';
 import {
   number,
@@ -15,6 +16,14 @@ import {
 
 const common = { use, ...candidate } as const;
 
+const NORMAL_FIELD = text(
+  NORMAL_HEIGHT_FIELDS.map((field) => field.id),
+  (name) =>
+    readNormalHeightField(name) === null
+      ? `one of ${NORMAL_HEIGHT_FIELDS.map((field) => field.id).join(', ')}; potsdam: the gravity in it was in the Potsdam system`
+      : null,
+);
+
 const h = optional(
   quantity('length', { tide: true, frame: true }),
   'Ellipsoidal height h',
@@ -26,7 +35,11 @@ const g = optional(
   'Gravity at the marker, m/s². Default: the site’s g.',
 );
 const physicalHeight = (what: string) =>
-  required(quantity('length', { tide: true }), `${what} H`, `${what} of the marker, m, positive above the datum.`);
+  required(
+    quantity('length', { tide: true, epoch: true }),
+    `${what} H`,
+    `${what} of the marker, m, positive above the datum.`,
+  );
 
 const gravityModel = shorthand(
   object('gravity model', 'A gravity model and how much of it is used.', {
@@ -64,7 +77,7 @@ export const determination = variant('determination', 'Kind', 'How the gravity p
     ...common,
     H: physicalHeight('Normal height'),
     datum: datumReference,
-    field: optional(text(), 'Normal field', 'Normal field the height was made with. Default: GRS80.'),
+    field: optional(NORMAL_FIELD, 'Normal field', 'Normal field the height was made with. Default: GRS80.'),
   }),
   'normal-orthometric-height': object('normal-orthometric-height', 'W from a height without measured gravity in it.', {
     ...common,
@@ -91,7 +104,7 @@ export const determination = variant('determination', 'Kind', 'How the gravity p
     ...common,
     h,
     zeta: required(
-      quantity('length', { tide: true, grid: true }),
+      quantity('length', { tide: true, frame: true, grid: true }),
       'Height anomaly ζ',
       'Height of the quasigeoid above the GRS80 ellipsoid, m.',
     ),
@@ -101,7 +114,7 @@ export const determination = variant('determination', 'Kind', 'How the gravity p
     ...common,
     h,
     N: required(
-      quantity('length', { tide: true, grid: true }),
+      quantity('length', { tide: true, frame: true, grid: true }),
       'Geoid height N',
       'Height of the geoid above the GRS80 ellipsoid, m.',
     ),

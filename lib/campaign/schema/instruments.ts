@@ -16,6 +16,7 @@ import {
   scalar,
   text,
 } from './descriptor.js';
+import { route } from './places.js';
 
 /** Link kinds for which typical published figures are offered. */
 export const LINK_KINDS = ['fibre', 'free-space', 'satellite', 'transported', 'local'] as const;
@@ -236,6 +237,11 @@ export const link = object(
       'fibre, free-space, satellite, transported or local; another word is kept and gets no starting values.',
     ),
     length: optional(scalar('length', { min: 0 }), 'Length', 'Length of the path, m.'),
+    route: optional(
+      route,
+      'Route',
+      'Way of the signal or of a moved clock, for path. Default: the geodesic between the sites.',
+    ),
     segments: optional(
       number({ integer: true, min: 1 }),
       'Segments',

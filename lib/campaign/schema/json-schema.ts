@@ -116,11 +116,12 @@ function reference(words: string, definitions: Definitions, make: () => JsonSche
 }
 
 function objectSchema(descriptor: ObjectDescriptor<Keys>, definitions: Definitions): JsonSchema {
-  const { exclusive, needs } = descriptor;
+  const { exclusive, needs, alternatives } = descriptor;
   return {
     type: 'object',
     description: descriptor.help,
     ...membersSchema(descriptor.name, descriptor.keys, definitions),
+    ...(alternatives.length > 0 ? { anyOf: alternatives.map((keys) => ({ required: keys })) } : {}),
     ...(exclusive.length > 0 ? { allOf: exclusive.map((pair) => ({ not: { required: pair } })) } : {}),
     ...(needs.length > 0 ? { dependentRequired: Object.fromEntries(needs.map(([a, b]) => [a, [b]])) } : {}),
   };
@@ -158,8 +159,8 @@ const example = (kind: QuantityKind): string => {
   return unit === '1' ? name : `${name}; default unit ${unit}`;
 };
 
-const nameOfQuantity = ({ kind, tide, frame, grid, sizesError }: QuantityDescriptor, key: string): string =>
-  `quantity ${[kind, tide ? 'with tide' : '', sizesError ? 'of an error' : '', frame || grid ? key : ''].filter(Boolean).join(' ')}`;
+const nameOfQuantity = ({ kind, tide, frame, epoch, grid, sizesError }: QuantityDescriptor, key: string): string =>
+  `quantity ${[kind, tide ? 'with tide' : '', sizesError ? 'of an error' : '', epoch ? 'with epoch' : '', frame || grid ? key : ''].filter(Boolean).join(' ')}`;
 
 const quantitySchema = (descriptor: QuantityDescriptor, key: string, definitions: Definitions): JsonSchema => ({
   description: `A measured quantity: ${example(descriptor.kind)}. Text: ${JSON.stringify(KINDS[descriptor.kind].example)}.`,

@@ -7,6 +7,7 @@ import {
   oneOf,
   optional,
   type QuantityDescriptor,
+  quantity,
   reference,
   remarks,
   required,
@@ -14,6 +15,7 @@ import {
   scalar,
   text,
 } from './descriptor.js';
+import { EPOCH, FRAME } from './epoch-and-frame.js';
 
 const source = optional(
   reference('sources'),
@@ -27,10 +29,22 @@ const tideKey = optional(
   'Permanent-tide system of the value. Without it a default is taken, with a warning.',
 );
 
+const epochKeys = {
+  epoch: optional(EPOCH, 'Epoch', 'Epoch of the height, decimal years.'),
+  rate: optional(
+    quantity('speed', { min: -3e-8, max: 3e-8, because: 'a vertical rate of the ground, less than a metre a year' }),
+    'Rate',
+    'Vertical rate, m/s, positive upwards: "1.2(3) mm/a". It brings the height to the epoch of the datum, or of the campaign.',
+  ),
+} as const;
+
 const frameKeys = {
-  frame: optional(text(), 'Frame', 'Terrestrial reference frame of the height.'),
-  epoch: optional(number({ min: 1900, max: 2200 }), 'Epoch', 'Epoch of the height, decimal years.'),
-  rate: optional(scalar('speed'), 'Rate', 'Vertical rate, m/s; positive upwards.'),
+  frame: optional(
+    FRAME,
+    'Frame',
+    'Terrestrial reference frame: ITRF2020 … ITRF2000, ETRF2000, ETRF2014, IGS20 and the like.',
+  ),
+  ...epochKeys,
 } as const;
 
 const degreesList = list(number({ min: -540, max: 540 }), { min: 2, max: 4 });
@@ -102,7 +116,7 @@ function makeQuantityKeys(descriptor: QuantityDescriptor): Keys {
     ),
     dof: optional(number({ above: 0 }), 'Degrees of freedom', 'Degrees of freedom of u. Default: infinitely many.'),
     ...(descriptor.tide ? { tide: tideKey } : {}),
-    ...(descriptor.frame ? frameKeys : {}),
+    ...(descriptor.frame ? frameKeys : descriptor.epoch ? epochKeys : {}),
     ...remarks,
   };
 }

@@ -47,6 +47,141 @@ const link = (more: string): Partial<typeof PARTS> => ({
   link: PARTS.link.replace('"id": "kl"', `"id": "kl", ${more}`),
 });
 
+/** A site whose place is stated by a position. */
+const position = (value: string): Partial<typeof PARTS> => ({
+  a: PARTS.a.replace('"lat": 52.3, "lon": 10.4', `"position": ${value}`),
+});
+
+/** Positions, the tide's keys, and routes. */
+const POSITION_CASES: readonly Case[] = [
+  {
+    code: 'missing-key',
+    path: 'sites.a.lon',
+    at: '{ "id": "a"',
+    change: { a: PARTS.a.replace(', "lon": 10.4', '') },
+    expected: 'longitude',
+  },
+  {
+    code: 'missing-key',
+    path: 'sites.a.position.crs',
+    at: '{ "x": 604000',
+    change: position('{ "x": 604000, "y": 5795000 }'),
+    expected: 'EPSG:25832',
+  },
+  {
+    code: 'unknown-crs',
+    path: 'sites.a.position.crs',
+    at: '"EPSG:9999"',
+    change: position('{ "crs": "EPSG:9999", "x": 604000, "y": 5795000 }'),
+    expected: 'projinfo EPSG:9999',
+  },
+  {
+    code: 'unsupported-definition',
+    path: 'sites.a.position.crs',
+    at: '"+proj=tmerc',
+    change: position('{ "crs": "+proj=tmerc +lon_0=9 +ellps=bessel +nadgrids=BETA2007.gsb", "x": 4, "y": 5 }'),
+    expected: '+towgs84',
+  },
+  {
+    code: 'swapped-axes',
+    path: 'sites.a.position',
+    at: '{ "crs": "EPSG:25832"',
+    change: position('{ "crs": "EPSG:25832", "x": 5795000, "y": 604000 }'),
+    expected: 'swapped',
+  },
+  {
+    code: 'missing-coordinate',
+    path: 'sites.a.position.y',
+    at: '{ "crs": "EPSG:25832"',
+    change: position('{ "crs": "EPSG:25832", "easting": 604000 }'),
+    expected: 'northing',
+  },
+  {
+    code: 'exclusive-keys',
+    path: 'sites.a.position.easting',
+    at: '"easting"',
+    change: position('{ "crs": "EPSG:25832", "x": 604000, "easting": 604000, "y": 5795000 }'),
+  },
+  {
+    code: 'unexpected-coordinate',
+    path: 'sites.a.position.easting',
+    at: '604000',
+    change: position('{ "crs": "EPSG:4326", "easting": 604000, "northing": 5795000 }'),
+    expected: 'lat and lon',
+  },
+  {
+    code: 'not-on-earth',
+    path: 'sites.a.position',
+    at: '{ "crs": "geocentric"',
+    change: position('{ "crs": "geocentric", "x": 3771.8, "y": 140.3, "z": 5124.3 }'),
+  },
+  {
+    code: 'wrong-unit',
+    path: 'sites.a.position.x',
+    at: 's"',
+    change: position('{ "crs": "EPSG:25832", "x": "604000 s", "y": 5795000 }'),
+  },
+  {
+    code: 'unknown-name',
+    path: 'sites.a.oceanLoading.0.constituent',
+    at: '"M5"',
+    change: site('"lat": 52.3, "oceanLoading": [{ "constituent": "M5", "amplitude": 0.1, "phase": 3 }]'),
+    expected: 'Ssa',
+  },
+  {
+    code: 'duplicate-constituent',
+    path: 'sites.a.oceanLoading.1.constituent',
+    at: '"m2"',
+    change: site(
+      '"lat": 52.3, "oceanLoading": [{ "constituent": "M2", "amplitude": 0.1, "phase": 3 }, { "constituent": "m2", "amplitude": 0.1, "phase": 3 }]',
+    ),
+  },
+  {
+    code: 'missing-key',
+    path: 'pole.1.time',
+    at: '{ "x": 0.3',
+    change: { target: '"pole": [{ "time": "2027-05-01T00:00:00Z", "x": 0.1, "y": 0.4 }, { "x": 0.3, "y": 0.4 }]' },
+  },
+  {
+    code: 'wrong-order',
+    path: 'pole.1.time',
+    at: '"2027-05-01T00:00:00Z", "x": 0.3',
+    change: {
+      target:
+        '"pole": [{ "time": "2027-06-01T00:00:00Z", "x": 0.1, "y": 0.4 }, { "time": "2027-05-01T00:00:00Z", "x": 0.3, "y": 0.4 }]',
+    },
+  },
+  {
+    code: 'out-of-range',
+    path: 'pole.0.x',
+    at: '120',
+    change: { target: '"pole": [{ "x": 120, "y": 0.44 }]' },
+    expected: 'arc-seconds',
+  },
+  {
+    code: 'missing-key',
+    path: 'links.kl.route.arrival',
+    at: '{ "departure"',
+    change: link('"route": { "departure": "2027-05-03T00:00:00Z" }'),
+  },
+  {
+    code: 'missing-key',
+    path: 'links.kl.route.via.0.time',
+    at: '{ "lat": 51',
+    change: link(
+      '"route": { "departure": "2027-05-03T00:00:00Z", "arrival": "2027-05-04T00:00:00Z", "via": [{ "lat": 51, "lon": 11 }] }',
+    ),
+  },
+  {
+    code: 'wrong-order',
+    path: 'links.kl.route.via.0.time',
+    at: '"2027-05-05T00:00:00Z"',
+    change: link(
+      '"route": { "departure": "2027-05-03T00:00:00Z", "arrival": "2027-05-04T00:00:00Z", "via": [{ "lat": 51, "lon": 11, "time": "2027-05-05T00:00:00Z" }] }',
+    ),
+  },
+];
+
 export const CASES: readonly Case[] = [
   // the file and its keys
   {
@@ -83,12 +218,12 @@ export const CASES: readonly Case[] = [
   { code: 'duplicate-key', path: 'sites.a.h.value', at: '"value": 2', change: h('{ "value": 1, "value": 2 }') },
   { code: 'missing-key', path: 'sites.a.lat', at: '{ "id": "a"', change: site('"name": "A"'), expected: 'latitude' },
   {
-    code: 'not-built',
-    path: 'sites.a.position',
-    at: '"position"',
-    change: site('"position": { "crs": "EPSG:25832", "x": 1, "y": 2 }'),
-    expected: 'does not compute it yet',
+    code: 'exclusive-keys',
+    path: 'sites.a.lon',
+    at: '"lon"',
+    change: site('"position": { "crs": "EPSG:25832", "x": 604000, "y": 5795000 }'),
   },
+  ...POSITION_CASES,
   { code: 'wrong-type', path: 'target', at: 'null', change: { target: '"target": null' } },
   { code: 'wrong-type', path: 'title', at: '7', change: { target: '"title": 7' }, expected: 'a text' },
   { code: 'lone-surrogate', path: 'title', at: '"\\ud800"', change: { target: '"title": "\\ud800"' } },
@@ -315,14 +450,59 @@ export const CASES: readonly Case[] = [
     change: h('{ "value": 143.2, "tide": "fre" }'),
     expected: '"free"',
   },
-  { code: 'not-built', path: 'sites.a.h.frame', at: '"frame"', change: h('{ "value": 143.2, "frame": "ITRF2020" }') },
   {
-    // the near match, epoch, is not offered while it would be refused
+    code: 'unknown-name',
+    path: 'sites.a.h.frame',
+    at: '"ETRS89"',
+    change: h('{ "value": 143.2, "frame": "ETRS89" }'),
+    expected: 'name the one of your heights, ETRF2000 or ETRF2014',
+  },
+  {
     code: 'unknown-key',
     path: 'sites.a.h.epoc',
     at: '"epoc"',
     change: h('{ "value": 143.2, "epoc": 2020 }'),
-    expected: 'one of "value"',
+    expected: '"epoch": did you mean that?',
+  },
+  {
+    code: 'out-of-range',
+    path: 'sites.a.h.epoch',
+    at: '61528',
+    change: h('{ "value": 143.2, "epoch": 61528 }'),
+    expected: 'decimal years',
+  },
+  {
+    code: 'out-of-range',
+    path: 'sites.a.h.rate',
+    at: '1.2',
+    change: h('{ "value": 143.2, "epoch": 2020, "rate": 1.2 }'),
+    expected: 'less than a metre a year',
+  },
+  {
+    code: 'wrong-unit',
+    path: 'sites.a.h.rate',
+    at: 'mm"',
+    change: h('{ "value": 143.2, "epoch": 2020, "rate": "1.2 mm" }'),
+  },
+  {
+    code: 'unknown-name',
+    path: 'datums.north.frame',
+    at: '"NAD83"',
+    change: { datums: PARTS.datums.replace('"id": "north"', '"id": "north", "frame": "NAD83"') },
+    expected: 'ITRF2020',
+  },
+  {
+    code: 'unknown-key',
+    path: 'sites.a.determinations.1.H.frame',
+    at: '"frame"',
+    change: det('{ "kind": "normal-height", "H": { "value": 1, "frame": "ITRF2020" } }'),
+  },
+  {
+    code: 'unknown-name',
+    path: 'sites.a.determinations.1.field',
+    at: '"Bessel"',
+    change: det('{ "kind": "normal-height", "H": 1, "field": "Bessel" }'),
+    expected: 'International1930',
   },
   {
     code: 'unknown-key',
