@@ -34,7 +34,8 @@ const commandLine = {
   format: 'esm',
   platform: 'node',
   target: 'node20',
-  minifySyntax: true,
+  minifySyntax: true, // not the names: they stand in messages
+  minifyWhitespace: true,
   legalComments: 'inline',
   banner: {
     // bundled CommonJS packages may call require

@@ -56,7 +56,7 @@ ${exitStatus}
 
 export const commandHelp = (command: Command): string => `plumbtick ${command.name}: ${command.summary}
 
-Use         plumbtick ${command.name} ${command.synopsis}
+${wrap(`Use         plumbtick ${command.name} ${command.synopsis}`, 108, ' '.repeat(12))}
 
 ${command.description.map((paragraph) => wrap(paragraph, 94)).join('\n\n')}
 

@@ -1,6 +1,8 @@
 import { existsSync, readFileSync } from 'node:fs';
 import path from 'node:path';
 import { describe, expect, it } from 'vitest';
+import { commands } from '../../lib/cli/commands/index.js';
+import { called } from './in-process.js';
 import { example, file, folder, plumbtick } from './run-cli.js';
 
 const { version } = JSON.parse(readFileSync(new URL('../../package.json', import.meta.url), 'utf8')) as {
@@ -14,21 +16,21 @@ describe('help for someone who meets it for the first time', () => {
     expect(stderr).toBe('');
     for (const word of ['height comparisons by optical clocks', 'plumbtick floors --dH', 'y > 0', 'Exit status'])
       expect(stdout).toContain(word);
-    for (const name of ['floors', 'new', 'check', 'predict']) expect(stdout).toMatch(new RegExp(`^  ${name} `, 'm'));
+    for (const { name } of commands) expect(stdout).toMatch(new RegExp(`^  ${name} `, 'm'));
   });
 
-  it('fits a terminal of 110 columns', () => {
-    const texts = [['--help'], ['predict', '--help'], ['floors', '--help'], ['check', '--help'], ['new', '--help']];
+  it('fits a terminal of 110 columns', async () => {
+    const texts = [['--help'], ...commands.map(({ name }) => [name, '--help'])];
     for (const args of texts)
-      for (const line of plumbtick(args).stdout.split('\n')) expect(line.length, line).toBeLessThanOrEqual(110);
+      for (const line of (await called(args)).stdout.split('\n')) expect(line.length, line).toBeLessThanOrEqual(110);
   });
 
-  it('tells about one command with its options, by both spellings', () => {
-    const { status, stdout } = plumbtick(['floors', '--help']);
+  it('tells about one command with its options, by both spellings', async () => {
+    const { status, stdout } = await called(['floors', '--help']);
     expect(status).toBe(0);
     for (const option of ['--dH LENGTH', '--g ACCELERATION', '--transition NAME', '--json', '--csv', '--markdown'])
       expect(stdout).toContain(option);
-    expect(plumbtick(['help', 'floors']).stdout).toBe(stdout);
+    expect((await called(['help', 'floors'])).stdout).toBe(stdout);
   });
 
   it('prints the version of the package', () => {
@@ -54,25 +56,25 @@ describe('a call whose words are wrong: exit status 2, said on standard error', 
     [['floors', '--dH', '3 m', '--dH', '4 m'], '--dH is given twice'],
     [['new', '--overwrite'], '--overwrite goes with --out FILE'],
     [['help', 'nothing'], 'there is no command "nothing"'],
-  ])('%j', (args, words) => {
-    const { status, stdout, stderr } = plumbtick(args);
+  ])('%j', async (args, words) => {
+    const { status, stdout, stderr } = await called(args);
     expect(status).toBe(2);
     expect(stdout).toBe('');
     expect(stderr).toContain(words);
   });
 
-  it('names the links and tables there are', () => {
+  it('names the links and tables there are', async () => {
     const campaign = example('three-sites.json');
-    const link = plumbtick(['predict', campaign, '--link', 'hx']);
+    const link = await called(['predict', campaign, '--link', 'hx']);
     expect(link).toMatchObject({ status: 2, stdout: '' });
     expect(link.stderr).toContain('no link "hx" in the file. Links: hr, rp, ph');
-    const table = plumbtick(['predict', campaign, '--csv', '--table', 'link']);
+    const table = await called(['predict', campaign, '--csv', '--table', 'link']);
     expect(table).toMatchObject({ status: 2, stdout: '' });
     expect(table.stderr).toContain('Tables: links, budget, sites');
   });
 
-  it('shows every unreadable option with a mark under the character', () => {
-    const { status, stderr } = plumbtick(['floors', '--dH', '12,348 m', '--g', '9.8125() m/s²']);
+  it('shows every unreadable option with a mark under the character', async () => {
+    const { status, stderr } = await called(['floors', '--dH', '12,348 m', '--g', '9.8125() m/s²']);
     expect(status).toBe(2);
     const lines = stderr.split('\n');
     const at = lines.findIndex((line) => line.includes('12,348 m'));
@@ -191,25 +193,25 @@ describe('floors and pair, without a file', () => {
     expect(stdout).toContain('The clock below runs slow by 3.499(11)e-16');
   });
 
-  it('pair: the higher site runs fast, and swapping the sites turns the sign', () => {
+  it('pair: the higher site runs fast, and swapping the sites turns the sign', async () => {
     const site = (id: string, [lat, h, zeta]: readonly [string, string, string]) =>
       [`--${id}-lat`, lat, `--${id}-lon`, '11', `--${id}-h`, h, `--${id}-zeta`, zeta] as const;
     const low = ['52.3', '143.216(8) m', '43.812(19) m'] as const;
     const high = ['50.9', '384.907(9) m', '45.733(20) m'] as const;
-    const y = (first: typeof low | typeof high, second: typeof low | typeof high) => {
-      const { status, stdout } = plumbtick(['pair', ...site('a', first), ...site('b', second), '--json']);
+    const y = async (first: typeof low | typeof high, second: typeof low | typeof high) => {
+      const { status, stdout } = await called(['pair', ...site('a', first), ...site('b', second), '--json']);
       expect(status).toBe(0);
       return (JSON.parse(stdout) as { y: { value: number; u: number } }).y;
     };
-    const up = y(low, high);
-    const down = y(high, low);
+    const up = await y(low, high);
+    const down = await y(high, low);
     expect(up.value).toBeGreaterThan(2.6e-14);
     expect(up.value + down.value).toBe(0);
     expect(Math.abs(up.u - down.u)).toBeLessThan(1e-30);
   });
 
-  it('pair says every missing option at once', () => {
-    const { status, stderr } = plumbtick(['pair', '--a-lat', '95']);
+  it('pair says every missing option at once', async () => {
+    const { status, stderr } = await called(['pair', '--a-lat', '95']);
     expect(status).toBe(2);
     for (const option of ['--a-lat 95', '--a-lon', '--a-h', '--a-zeta', '--b-lat', '--b-lon', '--b-h', '--b-zeta'])
       expect(stderr).toContain(option);

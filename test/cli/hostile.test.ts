@@ -1,8 +1,11 @@
+import path from 'node:path';
 import { describe, expect, it } from 'vitest';
-import { faultsOf, file, plumbtick, type Run } from './run-cli.js';
+import { called } from './in-process.js';
+import { faultsOf, file, folder, plumbtick, type Run } from './run-cli.js';
 
-const refusal = (text: string | Uint8Array): ReturnType<typeof faultsOf> =>
-  faultsOf(plumbtick(['predict', '-', '--json'], text));
+/** Faults of a text that is refused. The process itself is tried below; here only the text differs. */
+const refusal = async (text: string): Promise<ReturnType<typeof faultsOf>> =>
+  faultsOf(await called(['predict', path.join(folder, file('hostile.json', text)), '--json']));
 
 const format = 'plumbtick-campaign/1';
 const site = (id: string, more: object = {}) => ({
@@ -26,19 +29,19 @@ describe('text that is no campaign', () => {
     ['a number', '1e400'],
     ['a zero byte', '{"format": "\u0000"}'],
     ['a lone surrogate', '{"format": "plumbtick-campaign/1", "sites": [], "title": "\\ud800"} x'],
-  ])('%s', (_, text) => {
-    const [fault] = refusal(text);
+  ])('%s', async (_, text) => {
+    const [fault] = await refusal(text);
     expect(fault!.line).toBeGreaterThanOrEqual(1);
     expect(fault!.column).toBeGreaterThanOrEqual(1);
   });
 
-  it('deeply nested: lists, objects, and inside a campaign', () => {
+  it('deeply nested: lists, objects, and inside a campaign', async () => {
     for (const text of [
       '['.repeat(200_000),
       '{"a":'.repeat(200_000),
       `{"format":"${format}","sites":${'['.repeat(50_000)}`,
     ])
-      expect(refusal(text).map(({ code }) => code)).toContain('too-deep');
+      expect((await refusal(text)).map(({ code }) => code)).toContain('too-deep');
   });
 
   it('ten megabytes: of noise, of one text, of one site a million times over', () => {
@@ -65,13 +68,32 @@ describe('text that is no campaign', () => {
   }, 90_000);
 });
 
-describe('keys that steer objects', () => {
-  it.each(['__proto__', 'constructor', 'toString', 'hasOwnProperty'])('%s is an unknown key like any other', (key) => {
-    const top = refusal(`{"format": "${format}", "sites": [], "${key}": {"tide": "free"}}`);
-    expect(top).toMatchObject([{ code: 'unknown-key', path: key, line: 1 }]);
-    const inside = refusal(`{"format": "${format}", "sites": [{"id": "a", "lat": 1, "lon": 2, "${key}": {"h": 3}}]}`);
-    expect(inside).toMatchObject([{ code: 'unknown-key', path: `sites.a.${key}` }]);
+describe('in a process of its own', () => {
+  it.each([
+    ['empty', ''],
+    ['deeply nested', '['.repeat(200_000)],
+    ['__proto__', `{"format": "${format}", "sites": [], "__proto__": {"tide": "free"}}`],
+    ['NaN', JSON.stringify({ format, sites: [site('a', { h: 'NaN m' })] })],
+  ])('%s from standard input is refused without a trace of the stack', (_, text) => {
+    const { status, stdout, stderr } = plumbtick(['predict', '-'], text);
+    expect([status, stdout]).toEqual([1, '']);
+    expect(stderr).toMatch(/^Refused: one fault in standard input\nstandard input:1:\d+: /);
+    faultsOf(plumbtick(['predict', '-', '--json'], text));
   });
+});
+
+describe('keys that steer objects', () => {
+  it.each(['__proto__', 'constructor', 'toString', 'hasOwnProperty'])(
+    '%s is an unknown key like any other',
+    async (key) => {
+      const top = await refusal(`{"format": "${format}", "sites": [], "${key}": {"tide": "free"}}`);
+      expect(top).toMatchObject([{ code: 'unknown-key', path: key, line: 1 }]);
+      const inside = await refusal(
+        `{"format": "${format}", "sites": [{"id": "a", "lat": 1, "lon": 2, "${key}": {"h": 3}}]}`,
+      );
+      expect(inside).toMatchObject([{ code: 'unknown-key', path: `sites.a.${key}` }]);
+    },
+  );
 
   it('as an id it does no harm either', () => {
     const run = plumbtick(
@@ -84,7 +106,7 @@ describe('keys that steer objects', () => {
 });
 
 describe('values that cannot be', () => {
-  const valued = (more: object) => refusal(JSON.stringify({ format, sites: [site('a', more)] }, null, 1));
+  const valued = async (more: object) => refusal(JSON.stringify({ format, sites: [site('a', more)] }, null, 1));
 
   it.each([
     ['NaN text', { h: 'NaN m' }, 'sites.a.h'],
@@ -95,22 +117,22 @@ describe('values that cannot be', () => {
     ['a unit of another kind', { g: '9.8125 m' }, 'sites.a.g'],
     ['an empty bracket', { h: '143.2() m' }, 'sites.a.h'],
     ['a source that is not there', { h: { value: '143.2(1) m', source: 'gps' } }, 'sites.a.h.source'],
-  ])('%s: path and line of the fault', (_, more, path) => {
-    const [fault] = valued(more);
-    expect(fault!.path).toBe(path);
+  ])('%s: path and line of the fault', async (_, more, at) => {
+    const [fault] = await valued(more);
+    expect(fault!.path).toBe(at);
     expect(fault!.line).toBeGreaterThan(3);
   });
 
-  it('says every fault at once, in the order of the file', () => {
-    const faults = valued({ lat: 95, h: 'NaN m', colour: 'red' });
+  it('says every fault at once, in the order of the file', async () => {
+    const faults = await valued({ lat: 95, h: 'NaN m', colour: 'red' });
     expect(faults.length).toBeGreaterThanOrEqual(3);
     const lines = faults.map(({ line }) => line!);
     expect(lines).toEqual([...lines].sort((a, b) => a - b));
   });
 
-  it('duplicate ids, dangling ids, a link from a clock to itself', () => {
+  it('duplicate ids, dangling ids, a link from a clock to itself', async () => {
     const clock = { id: 'c', site: 'a', transition: '87Sr' };
-    const faults = refusal(
+    const faults = await refusal(
       JSON.stringify({
         format,
         sites: [site('a'), site('a')],
@@ -137,19 +159,19 @@ describe('inputs that contradict each other', () => {
     ),
   });
 
-  it('three inputs with ρ = −0.6 are refused, the source named; with ρ = −0.5 they pass', () => {
-    const [fault] = refusal(JSON.stringify(correlated(-0.6), null, 1));
+  it('three inputs with ρ = −0.6 are refused, the source named; with ρ = −0.5 they pass', async () => {
+    const [fault] = await refusal(JSON.stringify(correlated(-0.6), null, 1));
     expect(`${fault!.path} ${fault!.found} ${fault!.expected}`).toContain('common');
     expect(fault!.line).not.toBeNull();
     expect(plumbtick(['predict', '-', '--json'], JSON.stringify(correlated(-0.5))).status).toBe(0);
   });
 
-  it('exact determinations that contradict are refused with both paths', () => {
+  it('exact determinations that contradict are refused with both paths', async () => {
     const determinations = [
       { kind: 'potential', W: 62636000 },
       { kind: 'potential', W: 62636000.1 },
     ];
-    const faults = refusal(JSON.stringify({ format, sites: [site('a', { determinations })] }, null, 1));
+    const faults = await refusal(JSON.stringify({ format, sites: [site('a', { determinations })] }, null, 1));
     const text = JSON.stringify(faults);
     expect(text).toContain('sites.a.determinations.0');
     expect(text).toContain('sites.a.determinations.1');

@@ -68,7 +68,7 @@ export interface CliFault {
 }
 
 /** The faults of a refused file, from `--json`; every one complete. */
-export function faultsOf({ status, stdout }: Run): readonly CliFault[] {
+export function faultsOf({ status, stdout }: Pick<Run, 'status' | 'stdout'>): readonly CliFault[] {
   expect(status).toBe(1);
   const { faults } = JSON.parse(stdout) as { faults: readonly CliFault[] };
   expect(faults.length).toBeGreaterThan(0);
