@@ -11,6 +11,7 @@ import {
   interpolate,
   latitudeOfRowDeg,
   longitudeOfColumnDeg,
+  nodesToKeep,
   openGeoidGrid,
   type Registration,
   surveyGrid,
@@ -45,8 +46,12 @@ export interface GridAnswer {
   readonly otherMethod: { readonly method: InterpolationMethod; readonly value: number } | null;
   /** the four nodes round the point; value null where the grid has none (and needs none) */
   readonly nodes: readonly { readonly lat: number; readonly lon: number; readonly value: number | null }[];
-  /** up to 4 × 4 nodes, which a campaign can keep in place of the file */
-  readonly excerpt: GridExcerpt;
+  /** up to 4 × 4 nodes round the place, which a campaign can keep as `nodes` in place of the file; null where one of the four nearest has no value */
+  readonly keep: {
+    readonly lat: readonly number[];
+    readonly lon: readonly number[];
+    readonly values: readonly (readonly number[])[];
+  } | null;
   readonly range: { readonly least: number; readonly most: number; readonly missing: number };
   readonly warnings: readonly Warning[];
 }
@@ -71,6 +76,7 @@ export async function grid(source: ByteSource, question: GridQuestion): Promise<
   const excerpt = await gridExcerpt(opened, latitudeDeg, longitudeDeg);
   const { valueM, nodes } = interpolate(excerpt, latitudeDeg, longitudeDeg, method);
   const other = otherMethod(excerpt, latitudeDeg, longitudeDeg, method);
+  const kept = nodesToKeep(excerpt, latitudeDeg, longitudeDeg);
   const survey = await surveyGrid(opened, onProgress);
   const south = opened.latitudeStepDeg > 0 ? 0 : opened.rows - 1;
   const west = opened.longitudeStepDeg > 0 ? 0 : opened.columns - 1;
@@ -98,7 +104,7 @@ export async function grid(source: ByteSource, question: GridQuestion): Promise<
     value: valueM,
     otherMethod: other,
     nodes: nodes.map((n) => ({ lat: n.latitudeDeg, lon: n.longitudeDeg, value: n.valueM })),
-    excerpt,
+    keep: kept && { lat: kept.latitudesDeg, lon: kept.longitudesDeg, values: kept.valuesM as readonly number[][] },
     range: { least: survey.leastM, most: survey.mostM, missing: survey.missing },
     warnings: [
       ...opened.warnings,

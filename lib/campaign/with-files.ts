@@ -1,4 +1,4 @@
-import { interpolate } from '../earth/geoid-grid/interpolation.js';
+import { interpolate, nodesToKeep } from '../earth/geoid-grid/interpolation.js';
 import { kaulaOmission } from '../earth/gravity-model/model-uncertainty.js';
 import { GRS80 } from '../earth/level-ellipsoid.js';
 import { normalGravity } from '../earth/normal-field.js';
@@ -112,7 +112,12 @@ function gridValue(
     });
   try {
     const { valueM } = interpolate(nodes, place.latitudeDeg, place.longitudeDeg, grid.method);
-    return { ...measured, value: valueM, tide, grid: { ...grid, nodes } };
+    return {
+      ...measured,
+      value: valueM,
+      tide,
+      grid: { ...grid, nodes: nodesToKeep(nodes, place.latitudeDeg, place.longitudeDeg) },
+    };
   } catch (error) {
     if (!(error instanceof CampaignError)) throw error;
     faults.push(...error.faults.map((f) => inFile(f, `${path}.grid`, grid.file)));

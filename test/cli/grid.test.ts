@@ -1,5 +1,8 @@
+import { copyFileSync, mkdirSync } from 'node:fs';
+import path from 'node:path';
 import { fileURLToPath } from 'node:url';
 import { describe, expect, it } from 'vitest';
+import { gfcPieces, syntheticModel } from '../data/gravity-model/synthetic-model.mjs';
 import { file, folder, plumbtick } from './run-cli.js';
 
 const data = (name: string) => fileURLToPath(new URL(`../data/${name}`, import.meta.url));
@@ -89,5 +92,98 @@ describe('plumbtick grid', () => {
       ['--at', '40.5,120.5'],
     ])
       expect(plumbtick(['grid', ...words])).toMatchObject({ status: 2, stdout: '' });
+  });
+});
+
+describe('files beside a campaign', () => {
+  const gfc = [...gfcPieces(syntheticModel(36), { sigmas: true })].join('');
+  const site = (id: string, determination: object) => ({
+    id,
+    lat: 52.2961,
+    lon: id === 'b' ? 10.47 : 10.4598,
+    h: { value: '143.216(8) m', tide: 'free' },
+    g: '9.8125(1) m/s²',
+    determinations: [determination],
+  });
+  const campaign = (a: object, b: object) => ({
+    format: 'plumbtick-campaign/1',
+    sites: [site('a', a), site('b', b)],
+    clocks: [
+      { id: 'x', site: 'a', transition: '87Sr' },
+      { id: 'y', site: 'b', transition: '87Sr' },
+    ],
+    links: [{ id: 'xy', from: 'x', to: 'y' }],
+  });
+  interface Prediction {
+    sites: { W: { value: number; u: number } }[];
+    links: { dW: { value: number; u: number }; monteCarlo?: { u: number; validated: boolean } }[];
+    warnings: { code: string; path: string }[];
+  }
+
+  it('reads a grid and a gravity model from the folder of the campaign, with trials of the same errors', () => {
+    mkdirSync(path.join(folder, 'deep'), { recursive: true });
+    file('deep/field.gfc', gfc);
+    copyFileSync(data('geotiff/deflate-predictor3-tiles.tif'), path.join(folder, 'deep', 'geoid.tif'));
+    const N = { grid: 'geoid.tif', u: '0.3 m', tide: 'free', method: 'bicubic' };
+    const geoid = { kind: 'gnss-geoid', N, datum: 'ihrs' };
+    const model = { kind: 'gravity-model', model: { file: 'field.gfc', maxDegree: 30 } };
+    file('deep/mixed.json', campaign(geoid, model));
+    file('deep/models.json', campaign(model, model));
+    const predict = (name: string) => {
+      const run = plumbtick(['predict', `deep/${name}`, '--json', '--monte-carlo', '20000', '--seed', '1']);
+      expect(run.stderr).toBe('');
+      return JSON.parse(run.stdout) as Prediction;
+    };
+    const mixed = predict('mixed.json');
+    // W = W0 − γ̄·(h − N) with N = 43.1485 m, bicubic
+    expect(Math.abs(mixed.sites[0]!.W.value - (62_636_853.4 - 9.8126 * (143.216 - 43.1485)))).toBeLessThan(1.5);
+    const models = predict('models.json');
+    // what the model leaves out, 64 m/30, is nearly the same at both ends of 700 m
+    expect(models.sites[0]!.W.u).toBeGreaterThan(20);
+    expect(models.links[0]!.dW.u).toBeLessThan(1);
+    for (const { links } of [mixed, models]) expect(links[0]!.monteCarlo).toMatchObject({ validated: true });
+  });
+
+  it('keeps the nodes of a grid in a campaign that then stands alone', () => {
+    copyFileSync(data('geotiff/egm96-window.gtx'), path.join(folder, 'window.gtx'));
+    const { stdout } = plumbtick(['grid', 'window.gtx', '--at', '52.2961,10.4598', '--json']);
+    const { value, keep } = JSON.parse(stdout) as { value: number; keep: object };
+    const withNodes = {
+      kind: 'gnss-geoid',
+      datum: 'ihrs',
+      N: { grid: 'gone.gtx', u: '0.3 m', tide: 'free', nodes: keep },
+    };
+    const withValue = { kind: 'gnss-geoid', datum: 'ihrs', N: { value, u: '0.3 m', tide: 'free' } };
+    const predict = (determination: object) =>
+      JSON.parse(
+        plumbtick(
+          ['predict', '-', '--json'],
+          JSON.stringify({ format: 'plumbtick-campaign/1', sites: [site('a', determination)] }),
+        ).stdout,
+      ) as Prediction;
+    expect(predict(withNodes).sites).toEqual(predict(withValue).sites);
+  });
+
+  it('refuses a file that is not there or not good, at the place that names it', () => {
+    const check = (determination: object) => {
+      const { status, stdout } = plumbtick([
+        'check',
+        file('refused.json', campaign(determination, determination)),
+        '--json',
+      ]);
+      expect(status).toBe(1);
+      return (JSON.parse(stdout) as { faults: { code: string; path: string; found: string; line: number }[] }).faults;
+    };
+    const faults = check({ kind: 'gravity-model', model: 'gone.gfc' });
+    expect(faults.map((f) => [f.code, f.path])).toEqual([
+      ['file-not-at-hand', 'sites.a.determinations.0.model'],
+      ['file-not-at-hand', 'sites.b.determinations.0.model'],
+    ]);
+    file('cut.gfc', gfc.slice(0, gfc.indexOf('gfc   30    0')));
+    expect(check({ kind: 'gravity-model', model: 'cut.gfc' })[0]).toMatchObject({
+      code: 'coefficients-missing',
+      path: 'sites.a.determinations.0.model',
+    });
+    expect(check({ kind: 'gnss-quasigeoid', zeta: { grid: 'cut.gfc', u: 0.1 } })[0]).toMatchObject({ code: 'not-isg' });
   });
 });

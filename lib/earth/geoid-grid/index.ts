@@ -13,6 +13,7 @@ export {
   type InterpolatedValue,
   type InterpolationMethod,
   interpolate,
+  nodesToKeep,
 } from './interpolation.js';
 export { openGeoidGrid } from './open-geoid-grid.js';
 export { type GridSurvey, surveyGrid } from './survey.js';

@@ -179,6 +179,26 @@ export function interpolate(
   return { valueM, nodes };
 }
 
+/** The nodes that a campaign can keep in place of the grid: all of them, or the four round the point where one further out has no value;
+ *  null where one of these has none. */
+export function nodesToKeep(excerpt: GridExcerpt, latitudeDeg: number, longitudeDeg: number): GridExcerpt | null {
+  const isWhole = ({ valuesM }: GridExcerpt) => valuesM.every((row) => row.every((v) => v !== null));
+  if (isWhole(excerpt)) return excerpt;
+  const { latitudesDeg, longitudesDeg, valuesM } = excerpt;
+  const middle = (longitudesDeg[0]! + longitudesDeg.at(-1)!) / 2;
+  const near = longitudeDeg - 360 * Math.round((longitudeDeg - middle) / 360);
+  const cellOf = (nodes: readonly number[], x: number) =>
+    Math.max(0, Math.min(nodes.filter((n) => n <= x).length - 1, nodes.length - 2));
+  const row = cellOf(latitudesDeg, latitudeDeg);
+  const column = cellOf(longitudesDeg, near);
+  const four = {
+    latitudesDeg: latitudesDeg.slice(row, row + 2),
+    longitudesDeg: longitudesDeg.slice(column, column + 2),
+    valuesM: valuesM.slice(row, row + 2).map((values) => values.slice(column, column + 2)),
+  };
+  return isWhole(four) ? four : null;
+}
+
 /** Longitude within −180 … 180; the antimeridian keeps its sign. */
 const normalized = (degrees: number): number =>
   Math.abs(degrees) <= 180 ? degrees : degrees - 360 * Math.round(degrees / 360);

@@ -123,6 +123,14 @@ class IsgReader {
       this.#phase = 'head';
       this.#headFirstLine = this.#line + 1;
     } else if (/^\s*end_of_head/.test(text)) {
+      // gravity models begin alike
+      if (this.#headLines.some((line) => /^\s*(product_type|earth_gravity_constant)\s/.test(line)))
+        refuse(
+          'not-isg',
+          this.#line,
+          'the head of a gravity model in ICGEM format (.gfc)',
+          'a grid; a model is named by a determination of kind "gravity-model"',
+        );
       this.#begin(readIsgHeader(this.#headLines, this.#headFirstLine));
     } else this.#headLines.push(text);
   }

@@ -46,6 +46,7 @@ export class IcgemReader {
   #pending = new Uint8Array(0);
   #endedInLineFeed = true;
   #afterCarriageReturn = false;
+  #atLastLine = false;
 
   constructor(options: IcgemOptions = {}) {
     const { maxDegree } = options;
@@ -90,6 +91,7 @@ export class IcgemReader {
 
   /** @throws {CampaignError} if the head or any coefficient is missing */
   end(): GravityModel {
+    this.#atLastLine = true;
     if (this.#pending.length > 0) this.#takeLine(this.#pending, 0, this.#pending.length, 0x0a);
     this.#pending = new Uint8Array(0);
     const header = this.#header;
@@ -152,6 +154,15 @@ export class IcgemReader {
       this.#headerLines.push(text);
       return;
     }
+    // geoid grids begin alike
+    if (this.#headerLines.some((line) => /^\s*(isg format|nrows)\s*[=:]/i.test(line)))
+      throw new CampaignError([
+        this.#fault(
+          'not-icgem',
+          'the head of a geoid grid in ISG format',
+          'an ICGEM gravity-field file (.gfc); a grid is named by "zeta" or "N"',
+        ),
+      ]);
     this.#header = readIcgemHeader(this.#headerLines);
     this.#headerLines = [];
     this.#limit = this.#options.maxDegree ?? this.#header.maxDegree;
@@ -336,7 +347,8 @@ export class IcgemReader {
   }
 
   #refuseRow(found: string, expected: string): never {
-    throw new CampaignError([this.#fault('row', found.slice(0, 80), expected)]);
+    const cut = this.#atLastLine ? ' in the last line, which has no end: the file is cut off' : '';
+    throw new CampaignError([this.#fault('row', `${found.slice(0, 80)}${cut}`, expected)]);
   }
 
   #checkLineLength(length: number): void {

@@ -1,6 +1,6 @@
 import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
-import { gridExcerpt, interpolate, surveyGrid } from '../../../../lib/earth/geoid-grid/index.js';
+import { gridExcerpt, interpolate, nodesToKeep, surveyGrid } from '../../../../lib/earth/geoid-grid/index.js';
 import { faultOf, gtx, isg, open, valueAt } from './grid-fixtures.js';
 
 const rolling = (r: number, c: number) => 40 + 3 * Math.sin(0.3 * r) + 2 * Math.cos(0.2 * c + 0.1 * r);
@@ -114,5 +114,18 @@ describe('interpolation', () => {
     };
     expect((await faultOf(() => interpolate(holed, 51.3, 10.8, 'bicubic'))).expected).toContain('bilinear needs four');
     expect(interpolate(holed, 51.3, 10.8).valueM).toBe(interpolate(kept, 51.3, 10.8).valueM);
+    // what a campaign keeps then is the four nodes; nothing where one of these is missing
+    expect(nodesToKeep(kept, 51.3, 10.8)).toBe(kept);
+    const four = nodesToKeep(holed, 51.3, 370.8)!;
+    expect([four.latitudesDeg, four.longitudesDeg]).toEqual([
+      [51, 51.5],
+      [10.75, 11],
+    ]);
+    expect(interpolate(four, 51.3, 10.8).valueM).toBeCloseTo(interpolate(kept, 51.3, 10.8).valueM, 12);
+    const inner = {
+      ...kept,
+      valuesM: kept.valuesM.map((row, i) => row.map((v, j) => (i === 1 && j === 1 ? null : v))),
+    };
+    expect(nodesToKeep(inner, 51.3, 10.8)).toBeNull();
   });
 });

@@ -193,6 +193,12 @@ describe('ICGEM files', () => {
       expect(faultOf(() => parseIcgem(file({ [key]: value }, ROWS.slice(0, 1)))).code).toBe(code);
     });
 
+    it('a file that is cut in a row, and says that it is', () => {
+      const cut = file().slice(0, -9);
+      expect(faultOf(() => parseIcgem(cut))).toMatchObject({ code: 'row', line: 14 });
+      expect(faultOf(() => parseIcgem(cut)).found).toContain('the file is cut off');
+    });
+
     it('a difference of two fields', () => {
       expect(faultOf(() => parseIcgem(file({}, ['gfc 0 0 0 0', ...ROWS.slice(1)]))).code).toBe('not-a-whole-field');
     });
@@ -202,6 +208,11 @@ describe('ICGEM files', () => {
     });
 
     it('a file of another kind, without gathering it', () => {
+      const grid = readFileSync(new URL('../../../data/isg/example-1.isg', import.meta.url));
+      expect(faultOf(() => parseIcgem(grid))).toMatchObject({
+        code: 'not-icgem',
+        found: 'the head of a geoid grid in ISG format',
+      });
       expect(faultOf(() => parseIcgem(bytes('lat lon N\n1 2 3\n'))).code).toBe('not-icgem');
       const reader = new IcgemReader();
       const fault = faultOf(() => {
