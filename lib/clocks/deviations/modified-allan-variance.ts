@@ -2,19 +2,16 @@ import type { VarianceEstimate } from './difference-variance.js';
 import type { PhaseRecord } from './phase-record.js';
 
 /** Σ over all places j of (Σ_{i=j}^{j+m−1} x_{i+2m} − 2x_{i+m} + x_i)², the inner sum moved along by its difference
- *  x_{j+3m} − 3x_{j+2m} + 3x_{j+m} − x_j, with the rounding of every move carried along: O(N) whatever m is. */
+ *  x_{j+3m} − 3x_{j+2m} + 3x_{j+m} − x_j: O(N) whatever m is. The rounding of the moves adds up to some 1e-12 of
+ *  the result in the worst noise, random walk, over 3e5 moves. */
 function squaredMovingSums(x: Float64Array, first: number, terms: number, m: number): number {
   let moving = 0;
   for (let i = first; i < first + m; i++) moving += x[i + 2 * m]! - 2 * x[i + m]! + x[i]!;
-  let lost = 0;
   let block = moving * moving;
   let total = 0;
   for (let k = 1; k < terms; k++) {
     const a = first + k - 1;
-    const move = x[a + 3 * m]! - 3 * (x[a + 2 * m]! - x[a + m]!) - x[a]! - lost;
-    const next = moving + move;
-    lost = next - moving - move;
-    moving = next;
+    moving += x[a + 3 * m]! - 3 * (x[a + 2 * m]! - x[a + m]!) - x[a]!;
     block += moving * moving;
     if ((k & 8191) === 0) {
       total += block;

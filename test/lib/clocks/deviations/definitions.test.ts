@@ -7,7 +7,7 @@ import {
   phaseRecordOf,
   type Run,
 } from '../../../../lib/clocks/deviations/index.js';
-import { whiteFm } from '../simulated-noise.js';
+import { randomWalkFm, whiteFm } from '../simulated-noise.js';
 
 /** The definitions of NIST SP 1065 written out on averages of frequency, term by term, on a grid where NaN marks a missing sample:
  *  another route than the library's, which goes through phase and runs. */
@@ -134,6 +134,14 @@ describe('deviations against their definitions', () => {
       }),
       { numRuns: 400 },
     );
+  });
+
+  it('the moving sum of MDEV keeps its digits over 3e5 moves in phase that wanders far', () => {
+    const y = randomWalkFm(300_000, 1, 6);
+    const record = phaseRecordOf(y, [{ first: 0, count: y.length }]);
+    // At τ0 both are ½⟨(y₁ − y₀)²⟩.
+    const [oadev, mdev] = deviationsAt(record, 1, [1], ['oadev', 'mdev']);
+    expect(Math.abs(mdev!.value / oadev!.value - 1)).toBeLessThan(1e-11);
   });
 
   it('counts octaves up to half the longest run', () => {

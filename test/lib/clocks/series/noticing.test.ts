@@ -77,8 +77,8 @@ describe('time', () => {
     }
   });
 
-  it('an ordinary pause is no leap', () => {
-    const series = read(y.map((v, i) => `${mjd(i + (i >= 300 ? 86400 + 37 : 0))} ${value(v)}`));
+  it.each([86400 + 37, 43200, 2 * 3600])('a pause of %i s is no leap', (pause) => {
+    const series = read(y.map((v, i) => `${mjd(i + (i >= 300 ? pause : 0))} ${value(v)}`));
     expect(codes(series)).toEqual(['gaps']);
   });
 
