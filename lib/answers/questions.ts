@@ -86,15 +86,16 @@ export interface LinkQuestions {
   readonly id: string;
   /** u of the length equivalent now, m */
   readonly uM: number;
-  /** single inputs, best first */
+  /** single inputs, best first; beyond the first those that would change u by 1 % or more if they were exact */
   readonly inputs: readonly Improvement[];
   /** shared sources, best first */
   readonly sources: readonly Improvement[];
-  /** inputs whose error takes part of the others' away: a better value alone would make u larger */
+  /** inputs whose error takes part of the others' away: a better value alone would not help, or make u larger */
   readonly harmful: readonly BudgetPart[];
   /** kinds of work that would change u by less than 1 % even if all their inputs became exact */
   readonly idle: readonly Effort[];
   readonly gravity: readonly GravityVisit[];
+  /** those that could move y by 1e-20 or more */
   readonly tideLabels: readonly TideLabel[];
   readonly commonLabels: readonly CommonLabel[];
 }
@@ -102,6 +103,10 @@ export interface LinkQuestions {
 const C2 = SPEED_OF_LIGHT_SQUARED_M2_PER_S2;
 /** Improvements below this are not worth the name: u changes by less than 1 %. */
 const WORTH = 0.99;
+/** Negative shares of less size than this are not worth a word. */
+const SMALL_SHARE = 1e-3;
+/** Labels that move y by less are left out. */
+const SMALL_OFFSET = 1e-20;
 /** So many are solved anew; the others are behind them already by the weights as they are. */
 const CANDIDATES = 6;
 const SYSTEMS: readonly TideSystem[] = ['mean', 'zero', 'free'];
@@ -133,7 +138,8 @@ export function linkQuestions(
       .slice(0, CANDIDATES)
       .filter((item) => gain(item) > 0)
       .map(make)
-      .sort((a, b) => a.halvedM - b.halvedM);
+      .sort((a, b) => a.halvedM - b.halvedM)
+      .filter(({ exactM }, i) => i === 0 || exactM < WORTH * uM);
   const parts = budget.groups.flatMap((group) => group.parts);
   const shared = budget.groups.filter((group) => group.source !== null && group.parts.length > 1);
   return {
@@ -145,7 +151,9 @@ export function linkQuestions(
       (group) => group.share,
       (group) => improvement(group.source, null, group.share),
     ),
-    harmful: parts.filter((part) => exactGain(budget)(part) < 0),
+    harmful: parts.filter(
+      (part) => part.share < -SMALL_SHARE || exactGain(budget)(part) < (WORTH ** 2 - 1) * budget.u ** 2,
+    ),
     idle: idleWork(model, q.y.gradient, parts),
     gravity: gravityVisits(model, link, q, uM),
     ...labels(solved, link, q),
@@ -252,7 +260,8 @@ function labels(
       .sort((a, b) => Math.abs(b.y) - Math.abs(a.y));
   const values = tideLabelledValues(campaign).flatMap((value) => {
     const c = perValue(value);
-    return c === 0 ? [] : [{ value, error: (other: TideSystem) => c * errorOfLabel(value, other, campaign) }];
+    const error = (other: TideSystem) => c * errorOfLabel(value, other, campaign);
+    return SYSTEMS.some((system) => Math.abs(error(system)) >= SMALL_OFFSET) ? [{ value, error }] : [];
   });
   const tideLabels = values.map(({ value: { path, quantity, stated, used }, error }) => ({
     path,

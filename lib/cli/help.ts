@@ -7,7 +7,10 @@ export const commonOptions: Readonly<Record<string, OptionSpec>> = {
   json: { help: 'one JSON object, SI units, unrounded' },
   csv: { help: 'the tables as comma-separated values, unrounded' },
   markdown: { help: 'the tables as Markdown' },
-  table: { value: 'ID', help: 'only the table of that name, with --csv or --markdown' },
+  mediawiki: { help: 'the tables in the markup of MediaWiki' },
+  latex: { help: 'the tables as LaTeX' },
+  html: { help: 'the tables as HTML without scripts and styles, to paste into a page' },
+  table: { value: 'ID', help: 'only the table of that name, with --csv or a markup' },
   help: { help: 'this text' },
 };
 

@@ -2,8 +2,8 @@ import { CampaignError, type Fault, faultAt } from '../campaign/fault.js';
 import { version } from '../constants/version.js';
 import { closest } from '../quantity/near-match.js';
 import { reportAsCsv, tableAsCsv } from '../report/as-csv.js';
-import { reportAsMarkdown, tableAsMarkdown } from '../report/as-markdown.js';
 import { cautionsAsText, reportAsText } from '../report/as-text.js';
+import { type MarkupForm, markup, markupForms } from '../report/markup.js';
 import { type ParsedWords, parseWords } from './arguments.js';
 import { type Answer, type Call, type Command, type PlainText, UsageError } from './command.js';
 import { commands } from './commands/index.js';
@@ -13,7 +13,7 @@ import { commandHelp, commonOptions, globalHelp } from './help.js';
 import { readFileText } from './read-file.js';
 
 type Status = 0 | 1 | 2;
-type Form = 'text' | 'json' | 'csv' | 'markdown';
+type Form = 'text' | 'json' | 'csv' | MarkupForm;
 
 const out = (text: string) => process.stdout.write(text);
 const err = (text: string) => process.stderr.write(text);
@@ -106,12 +106,12 @@ function parse(command: Command, words: readonly string[]): ParsedWords {
 }
 
 function formOf(command: Command, { values }: ParsedWords): Form {
-  const forms = (['json', 'csv', 'markdown'] as const).filter((name) => values.has(name));
+  const forms = (['json', 'csv', ...markupForms] as const).filter((name) => values.has(name));
   if (forms.length > 1)
     throw new UsageError(`${command.name}: only one of ${forms.map((f) => `--${f}`).join(' and ')}`);
   const [form = 'text'] = forms;
   if (values.has('table') && (form === 'text' || form === 'json'))
-    throw new UsageError(`${command.name}: --table goes with --csv or --markdown`);
+    throw new UsageError(`${command.name}: --table goes with --csv or --markdown (--mediawiki, --latex, --html)`);
   return form;
 }
 
@@ -177,8 +177,8 @@ function print(answer: Answer | PlainText, form: Form, tableId: string | null): 
   if (form === 'csv') {
     out(table ? tableAsCsv(table) : reportAsCsv(report));
     if (report.cautions.length > 0) err(`${cautionsAsText(report.cautions)}\n`); // no place for them among the values
-  } else if (form === 'markdown') out(table ? `${tableAsMarkdown(table)}\n` : reportAsMarkdown(report));
-  else out(reportAsText(report));
+  } else if (form === 'text') out(reportAsText(report));
+  else out(table ? `${markup[form].table(table)}\n` : markup[form].report(report));
   return answer.status;
 }
 

@@ -65,7 +65,7 @@ export const decimalCell = (value: number, decimals: number, style: SignStyle = 
 });
 
 /** So many digits after the point, trailing zeros kept: in a column they say how far the number is known. */
-function fixedText(value: number, decimals: number, style: SignStyle): string {
+export function fixedText(value: number, decimals: number, style: SignStyle): string {
   const text = value.toFixed(decimals);
   if (Number(text) === 0) return text.replace('-', '');
   return value < 0 ? text.replace('-', '\u2212') : style === 'signed' ? `+${text}` : text;

@@ -202,3 +202,19 @@ describe('other forms', () => {
     expect(plumbtick(['predict', '-', '--json'], text).stdout).toBe(plumbtick(['predict', campaign, '--json']).stdout);
   });
 });
+
+describe('the tables in markup', () => {
+  it.each([
+    ['--mediawiki', /^== .* ==\n/, '{| class="wikitable"'],
+    ['--latex', /^% Computed by Plumbtick /, '\\begin{tabular}'],
+    ['--html', /^<section>\n<h2>/, '<caption>'],
+  ] as const)('%s', (form, beginning, table) => {
+    const { status, stdout, stderr } = plumbtick(['predict', example('three-sites.json'), form]);
+    expect(status).toBe(0);
+    expect(stderr).toBe('');
+    expect(stdout).toMatch(beginning);
+    expect(stdout).toContain(table);
+    const one = plumbtick(['predict', example('three-sites.json'), form, '--table', 'links']).stdout;
+    expect(stdout).toContain(one.trim());
+  });
+});
