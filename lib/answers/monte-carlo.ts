@@ -67,12 +67,14 @@ export function* predictMonteCarloSteps(
   return withMonteCarlo(solved, yield* linkMonteCarloSteps(solved, request));
 }
 
-/** Runs the trials of all links that have a prediction, in slices; see {@link monteCarloSteps}. */
+/** Runs the trials of links that have a prediction, in slices; see {@link monteCarloSteps}.
+ * @param links indices of the links wanted; default: all. Fewer links draw fewer inputs, so that their trials are others */
 export function linkMonteCarloSteps(
   solved: SolvedCampaign,
   request: MonteCarloRequest,
+  links: readonly number[] = solved.links.map((_, l) => l),
 ): Generator<MonteCarloProgress, MonteCarloResult, void> {
-  const known = solved.links.flatMap((q, l) => (q ? [l] : []));
+  const known = links.filter((l) => solved.links[l]);
   return monteCarloSteps({
     ...linkTrials(solved, known),
     linear: known.map((l) => {
