@@ -26,6 +26,8 @@ export interface JsonString {
   readonly type: 'string';
   readonly start: number;
   readonly value: string;
+  /** not from JSON: the characters stand in the text as they are, from `start` on */
+  readonly verbatim?: true;
 }
 
 export interface JsonNumber {

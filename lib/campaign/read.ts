@@ -35,7 +35,17 @@ export const readCampaign = (text: string, options: ReadOptions = {}): ReadCampa
 export const readCampaignValue = (value: unknown, options: ReadOptions = {}): ReadCampaign =>
   read(null, () => jsonTreeOf(value), options);
 
-function read(text: string | null, tree: () => JsonNode, { files = NO_FILES }: ReadOptions): ReadCampaign {
+/** Reads and validates a campaign whose parts stand in a text of another kind, such as a table.
+ * @param tree nodes that know where in the text they stood; −1 where nowhere
+ * @throws {CampaignError} with every fault; line and column where the text holds the value */
+export const readCampaignTree = (text: string, tree: JsonNode): ReadCampaign => read(text, () => tree, {}, false);
+
+function read(
+  text: string | null,
+  tree: () => JsonNode,
+  { files = NO_FILES }: ReadOptions,
+  isJson = true,
+): ReadCampaign {
   const reading = new Reading(text);
   try {
     const file = readTree(tree(), reading);
@@ -49,7 +59,8 @@ function read(text: string | null, tree: () => JsonNode, { files = NO_FILES }: R
     if (error instanceof JsonTextError) {
       const { code, start, found, expected } = error.fault;
       reading.add(code, '', { type: 'null', start }, found, expected);
-    } else if (error instanceof CampaignError && text !== null) throw new CampaignError(withPlaces(text, error.faults));
+    } else if (error instanceof CampaignError && text !== null && isJson)
+      throw new CampaignError(withPlaces(text, error.faults));
     else if (!(error instanceof TooManyFaults)) throw error;
   }
   throw new CampaignError(reading.faults());

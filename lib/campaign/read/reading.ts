@@ -69,9 +69,8 @@ export class Reading {
 
   /** Index in the file of a character inside a text value. */
   placeInside(node: JsonNode, position: number): number {
-    return this.text === null || node.start < 0 || node.type !== 'string'
-      ? node.start
-      : placeInString(this.text, node.start, position);
+    if (this.text === null || node.start < 0 || node.type !== 'string') return node.start;
+    return node.verbatim ? node.start + position : placeInString(this.text, node.start, position);
   }
 
   /** The faults, by their place in the file; those without a text in the order in which they were found. */

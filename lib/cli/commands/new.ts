@@ -1,6 +1,6 @@
-import { writeFileSync } from 'node:fs';
 import { type Command, UsageError } from '../command.js';
 import { starterCampaign } from '../starter-campaign.js';
+import { writeNewFile } from '../write-new-file.js';
 
 export const newCampaign: Command = {
   name: 'new',
@@ -22,39 +22,8 @@ export const newCampaign: Command = {
       if (call.has('overwrite')) throw new UsageError('new: --overwrite goes with --out FILE');
       return { kind: 'plain', text: starterCampaign };
     }
-    const replaced = write(name, call.has('overwrite'));
+    const replaced = writeNewFile('new', name, starterCampaign, call.has('overwrite'));
     const words = `${replaced ? 'Replaced' : 'Wrote'} ${name}. Next: plumbtick predict ${/\s/.test(name) ? JSON.stringify(name) : name}\n`;
     return { kind: 'plain', text: words };
   },
 };
-
-/** @returns whether a file of that name was there before */
-function write(name: string, overwrite: boolean): boolean {
-  try {
-    writeFileSync(name, starterCampaign, { flag: 'wx' });
-    return false;
-  } catch (error) {
-    const { code } = error as NodeJS.ErrnoException;
-    if (code !== 'EEXIST') throw cannotWrite(name, code);
-    if (!overwrite) throw new UsageError(`new: ${name} exists and was left alone. Another name, or --overwrite`);
-  }
-  try {
-    writeFileSync(name, starterCampaign);
-    return true;
-  } catch (error) {
-    throw cannotWrite(name, (error as NodeJS.ErrnoException).code);
-  }
-}
-
-const reasons: Readonly<Record<string, string>> = {
-  ENOENT: 'there is no such folder',
-  ENOTDIR: 'there is no such folder',
-  EACCES: 'it may not be written',
-  EPERM: 'it may not be written',
-  EROFS: 'it may not be written',
-  EISDIR: 'it is a folder',
-  ENOSPC: 'the disk is full',
-};
-
-const cannotWrite = (name: string, code = 'unknown reason'): UsageError =>
-  new UsageError(`new: ${name} can't be written: ${reasons[code] ?? code}`);

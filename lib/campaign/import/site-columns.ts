@@ -1,0 +1,52 @@
+import type { FieldNames } from './table-head.js';
+
+/** Columns of a table of sites, by what they are in the campaign. */
+export const SITE_FIELDS: readonly FieldNames[] = [
+  { field: 'id', names: ['id', 'site', 'station', 'code'] },
+  { field: 'name', names: ['name'] },
+  { field: 'note', names: ['note', 'remark'] },
+  { field: 'lat', names: ['lat', 'latitude', 'φ'] },
+  { field: 'lon', names: ['lon', 'long', 'longitude', 'λ'] },
+  { field: 'h', names: ['h', 'ellipsoidal height'] },
+  { field: 'zeta', names: ['zeta', 'ζ', 'height anomaly'] },
+  { field: 'N', names: ['N', 'geoid height', 'undulation'] },
+  { field: 'C', names: ['C', 'geopotential number'] },
+  { field: 'W', names: ['W', 'potential'] },
+  { field: 'normal-height', names: ['normal height', 'H normal'] },
+  { field: 'orthometric-height', names: ['orthometric height', 'H orthometric'] },
+  { field: 'dynamic-height', names: ['dynamic height', 'H dynamic'] },
+  { field: 'datum', names: ['datum'] },
+  { field: 'geoid-datum', names: ['geoid datum'] },
+  { field: 'g', names: ['g', 'gravity'] },
+  { field: 'gradient', names: ['gradient'] },
+  { field: 'variable', names: ['variable'] },
+  { field: 'levelled-from', names: ['levelled from', 'leveled from'] },
+  { field: 'dH', names: ['dH', 'height difference'] },
+  { field: 'line-length', names: ['line length'] },
+  { field: 'b', names: ['b'] },
+  { field: 'k', names: ['k'] },
+  { field: 'clock', names: ['clock'] },
+  { field: 'transition', names: ['transition', 'species'] },
+  { field: 'tie', names: ['tie'] },
+  { field: 'systematic', names: ['systematic'] },
+  { field: 'white', names: ['white', 'stability'] },
+  { field: 'flicker', names: ['flicker'] },
+  { field: 'uptime', names: ['uptime'] },
+];
+
+/** Columns of a table of links. */
+export const LINK_FIELDS: readonly FieldNames[] = [
+  { field: 'id', names: ['id', 'link'] },
+  { field: 'name', names: ['name'] },
+  { field: 'note', names: ['note', 'remark'] },
+  { field: 'from', names: ['from'] },
+  { field: 'to', names: ['to'] },
+  { field: 'kind', names: ['kind'] },
+  { field: 'length', names: ['length'] },
+  { field: 'segments', names: ['segments'] },
+  { field: 'systematic', names: ['systematic'] },
+  { field: 'white', names: ['white'] },
+  { field: 'flicker', names: ['flicker'] },
+  { field: 'phase', names: ['phase'] },
+  { field: 'uptime', names: ['uptime'] },
+];
