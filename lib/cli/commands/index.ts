@@ -1,6 +1,7 @@
 import type { Command } from '../command.js';
 import { adjust } from './adjust.js';
 import { breakEven } from './break-even.js';
+import { budget } from './budget.js';
 import { check } from './check.js';
 import { cite } from './cite.js';
 import { compare } from './compare.js';
@@ -8,6 +9,7 @@ import { design } from './design.js';
 import { evaluate } from './evaluate.js';
 import { floors } from './floors.js';
 import { grid } from './grid.js';
+import { importTable } from './import.js';
 import { newCampaign } from './new.js';
 import { pair } from './pair.js';
 import { plan } from './plan.js';
@@ -22,8 +24,10 @@ export const commands: readonly Command[] = [
   floors,
   pair,
   newCampaign,
+  importTable,
   check,
   predict,
+  budget,
   plan,
   breakEven,
   transported,
