@@ -9,6 +9,7 @@ export {
   predictMonteCarloSteps,
 } from './answers/monte-carlo.js';
 export { type PairAnswer, type PairInput, pair } from './answers/pair.js';
+export { type LinkPath, type PathAnswer, path } from './answers/path.js';
 export { predict } from './answers/predict.js';
 export type * from './answers/prediction.js';
 export { analyseSeries, type SeriesAnswer, type SeriesDeviation, type SeriesQuestion } from './answers/series.js';

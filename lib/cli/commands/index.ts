@@ -12,6 +12,7 @@ import { grid } from './grid.js';
 import { importTable } from './import.js';
 import { newCampaign } from './new.js';
 import { pair } from './pair.js';
+import { path } from './path.js';
 import { plan } from './plan.js';
 import { predict } from './predict.js';
 import { series } from './series.js';
@@ -39,5 +40,6 @@ export const commands: readonly Command[] = [
   design,
   series,
   tide,
+  path,
   grid,
 ];
