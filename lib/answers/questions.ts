@@ -154,7 +154,7 @@ export function linkQuestions(
     harmful: parts.filter(
       (part) => part.share < -SMALL_SHARE || exactGain(budget)(part) < (WORTH ** 2 - 1) * budget.u ** 2,
     ),
-    idle: idleWork(model, q.y.gradient, parts),
+    idle: idleEfforts(solved, link, budget),
     gravity: gravityVisits(model, link, q, uM),
     ...labels(solved, link, q),
   };
@@ -200,11 +200,19 @@ export function effortOf(path: string): Effort | null {
   return key === 'dH' || key === 'b' || key === 'k' ? 'levelling' : (EFFORTS[key] ?? null);
 }
 
-function idleWork({ covariance }: Model, gradient: Gradient, parts: readonly BudgetPart[]): Effort[] {
-  const efforts = new Set(parts.flatMap(({ input }) => effortOf(input) ?? []));
-  const variance = covariance.variance(gradient);
+/** Kinds of work that would change u(y) by less than 1 % even if they made all their inputs exact, at the weights as they are. */
+export function idleEfforts(
+  solved: Pick<SolvedCampaign, 'model' | 'potentials'>,
+  link: number,
+  { groups }: GroupedBudget,
+): Effort[] {
+  const q = quantitiesOfLink(solved, link);
+  if (!q) return [];
+  const { covariance } = solved.model;
+  const efforts = new Set(groups.flatMap(({ parts }) => parts.flatMap(({ input }) => effortOf(input) ?? [])));
+  const variance = covariance.variance(q.y.gradient);
   return [...efforts].filter((effort) => {
-    const left = without(gradient, (i) => effortOf(covariance.inputs[i]!.path) === effort);
+    const left = without(q.y.gradient, (i) => effortOf(covariance.inputs[i]!.path) === effort);
     const ratio = covariance.variance(left) / variance;
     return ratio > WORTH ** 2 && ratio <= 1;
   });
