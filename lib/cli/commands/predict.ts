@@ -1,5 +1,8 @@
 import { predictMonteCarlo } from '../../answers/monte-carlo.js';
 import { predict as predictCampaign } from '../../answers/predict.js';
+import { tideCautions } from '../../answers/tide-cautions.js';
+import type { Campaign } from '../../campaign/campaign.js';
+import type { Warning } from '../../campaign/fault.js';
 import { withMonteCarloTable } from '../../report/monte-carlo-table.js';
 import { predictionReport } from '../../report/prediction-report.js';
 import { readCallCampaign } from '../campaign-of-call.js';
@@ -35,7 +38,7 @@ export const predict: Command = {
     const request = monteCarloRequest(call);
     const reportOptions = { title, provenance: call.provenance, links };
     if (request !== null) {
-      const prediction = withWarnings(refuseAt(() => predictMonteCarlo(campaign, request)));
+      const prediction = withWarnings(refuseAt(() => withTide(campaign, predictMonteCarlo(campaign, request))));
       return {
         kind: 'answer',
         status: 0,
@@ -47,7 +50,7 @@ export const predict: Command = {
           ),
       };
     }
-    const prediction = withWarnings(refuseAt(() => predictCampaign(campaign)));
+    const prediction = withWarnings(refuseAt(() => withTide(campaign, predictCampaign(campaign))));
     return {
       kind: 'answer',
       status: 0,
@@ -87,3 +90,9 @@ function wholeNumber(text: string): number | null {
   const value = Number(text.replaceAll('_', ''));
   return Number.isSafeInteger(value) ? value : null;
 }
+
+/** y is that of the mean tide; where the Earth tide of the window matters beside it, a caution says so. */
+const withTide = <T extends { readonly warnings: readonly Warning[] }>(campaign: Campaign, answer: T): T => ({
+  ...answer,
+  warnings: [...answer.warnings, ...tideCautions(campaign)],
+});

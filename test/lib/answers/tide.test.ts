@@ -1,6 +1,7 @@
 import { describe, expect, it } from 'vitest';
 import { meanOverIntervals } from '../../../lib/answers/mean-over-intervals.js';
 import { tide } from '../../../lib/answers/tide.js';
+import { tideCautions } from '../../../lib/answers/tide-cautions.js';
 import type { Campaign } from '../../../lib/campaign/campaign.js';
 import { CampaignError } from '../../../lib/campaign/fault.js';
 import { readCampaignValue } from '../../../lib/campaign/read.js';
@@ -202,6 +203,24 @@ describe('tide of a campaign', () => {
       ],
     };
     expect(faultOf(() => tide(early))).toMatchObject({ code: 'pole-outside-window', path: 'pole' });
+  });
+});
+
+describe('a word on the tide beside a prediction', () => {
+  it('names the links on which averaging leaves more than a third of the target', () => {
+    const short = { window: { start: '2027-05-03T00:00:00Z', end: '2027-05-03T05:00:00Z' }, target: '1 cm' };
+    const cautions = tideCautions(campaignOf(short));
+    expect(cautions.map((w) => [w.code, w.path])).toEqual([
+      ['tide-needs-correcting', 'links.ns'],
+      ['tide-needs-correcting', 'links.sn'],
+    ]);
+    const left = linkOf(tide(campaignOf(short)), 'ns').left!.mean;
+    expect(cautions[0]!.message).toContain(`${(left * 1e18).toFixed(2)}e-18`);
+    expect(tideCautions(campaignOf({ target: '10 m' }))).toEqual([]);
+    expect(tideCautions(campaignOf({ ...short, links: [] }))).toEqual([]);
+    const { window, ...windowless } = base;
+    expect(tideCautions(readCampaignValue(windowless).campaign)).toEqual([]);
+    expect(window).toBeDefined();
   });
 });
 
