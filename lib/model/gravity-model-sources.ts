@@ -29,7 +29,11 @@ export function gravityModelSources(campaign: Campaign): ErrorSource[] {
       id,
       correlation: null,
       correlationLengthM: null,
-      between: (a, b) => correlation[index.get(a.key) ?? -1]?.[index.get(b.key) ?? -1] ?? 0,
+      between: (a, b) => {
+        const rho = correlation[index.get(a.key) ?? -1]?.[index.get(b.key) ?? -1];
+        if (rho === undefined) throw new Error(`internal: no correlation of ${file} between ${a.key} and ${b.key}`);
+        return rho;
+      },
     });
   }
   for (const site of campaign.sites)
