@@ -1,5 +1,6 @@
 /** All elements of Plumbtick, registered; for one alone take its own `….define.js`. */
 import './campaign/plumb-campaign.define.js';
+import './desk/plumb-desk.define.js';
 import './floors/plumb-floors.define.js';
 import './links/plumb-links.define.js';
 import './network/plumb-network.define.js';
@@ -7,6 +8,7 @@ import './pair/plumb-pair.define.js';
 
 export { version } from '../lib/constants/version.js';
 export { PlumbCampaign } from './campaign/plumb-campaign.js';
+export { PlumbDesk } from './desk/plumb-desk.js';
 export { PlumbFloors } from './floors/plumb-floors.js';
 export { PlumbLinks } from './links/plumb-links.js';
 export { PlumbNetwork } from './network/plumb-network.js';
