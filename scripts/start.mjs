@@ -46,6 +46,8 @@ if (status !== 0) process.exit(status ?? 1);
 
 const { server, address } = await serve({ port });
 console.log(`\nThe pages are served at ${address}   (Ctrl-C ends)`);
+for (const name of fs.readdirSync(path.join(root, 'sites')).sort())
+  if (name.endsWith('.html') && name !== 'index.html') console.log(`  ${address}${name}`);
 for (const signal of ['SIGINT', 'SIGTERM'])
   process.on(signal, () => {
     server.close();
