@@ -14,6 +14,7 @@ export { predict } from './answers/predict.js';
 export type * from './answers/prediction.js';
 export { analyseSeries, type SeriesAnswer, type SeriesDeviation, type SeriesQuestion } from './answers/series.js';
 export { type LinkTide, TIDE_STEP_S, type TideAnswer, type TideLeft, tide } from './answers/tide.js';
+export { tideCautions } from './answers/tide-cautions.js';
 export type * from './campaign/campaign.js';
 export { CampaignError, type Fault, type Warning } from './campaign/fault.js';
 export { type ReadCampaign, readCampaign, readCampaignValue } from './campaign/read.js';
@@ -32,8 +33,18 @@ export { type Reduction, type ReductionOptions, reduceSeries } from './clocks/re
 export * from './clocks/series/index.js';
 export { version } from './constants/version.js';
 export { type ByteSource, bytesSource } from './earth/file-bytes/byte-source.js';
+export { FRAME_NAMES, type FrameName, readFrameName } from './earth/frames/frame-name.js';
+export { transformPosition } from './earth/frames/frame-transformation.js';
+export { frameChangeOfHeight, type HeightInFrame, heightInFrame } from './earth/frames/height-in-frame.js';
+export { type GeocentricPosition, geocentricToGeodetic, geodeticToGeocentric } from './earth/geocentric.js';
 export * from './earth/geoid-grid/index.js';
 export * from './earth/gravity-model/index.js';
+export {
+  type PositionReading,
+  type ResolvedPosition,
+  resolvePosition,
+  type StatedPosition,
+} from './earth/projected-position/resolve-position.js';
 export * from './report/index.js';
 export {
   type MonteCarloOptions,

@@ -59,6 +59,27 @@ describe('Sagnac delay', () => {
   });
 });
 
+describe('leg along the surface', () => {
+  it('is as long as the arc at its mean height, and slants where it climbs', () => {
+    const arc = GRS80.a * degToRad(10);
+    within(alongGeodesic(point(0, 0), point(0, 10)).lengthM, arc, 1e-3);
+    within(alongGeodesic(point(0, 0, 9000), point(0, 10, 9000)).lengthM, arc + 9000 * degToRad(10), 1e-3);
+    within(
+      alongGeodesic(point(0, 0, 1000), point(0, 10, 9000)).lengthM,
+      Math.hypot(arc + 5000 * degToRad(10), 8000),
+      1e-3,
+    );
+    within(alongGeodesic(point(40, 3, 100), point(40, 3, 600)).lengthM, 500, 1e-9);
+  });
+
+  it('has points at most so far apart, both ends among them, heights evenly between', () => {
+    const { points } = alongGeodesic(point(0, 0, 0), point(0, 1, 1000), 25_000);
+    expect(points).toHaveLength(6);
+    within(points[1]!.heightM, 200, 1e-9);
+    expect(points.at(-1)).toEqual(point(0, 1, 1000));
+  });
+});
+
 describe('gravitational delay', () => {
   it('is 2GM/c³·ln((r₁ + r₂ + ρ)/(r₁ + r₂ − ρ)): against the integral of 2GM/(c³r) along the leg', () => {
     const ground = xyz(point(50, 10));
