@@ -107,18 +107,20 @@ export function linkTrials(solved: SolvedCampaign, links: readonly number[]): Li
           weightedSum(gain, determinationTrials, count, siteTrials[s]!);
         });
         clockList.forEach((_, c) => {
-          const clock = clockTrials[c]!;
-          clock.set(siteTrials[siteOfClock[c]!]!);
+          const parts: Float64Array[] = [siteTrials[siteOfClock[c]!]!];
           const tie = ties[c];
           if (tie) {
             evaluateTerm(tie, deviations, count, tieTrial);
-            for (let t = 0; t < count; t++) clock[t]! += tieTrial[t]!;
+            parts.push(tieTrial);
           }
           const variable = variables[c];
-          if (variable !== null && variable !== undefined) {
-            const d = deviations[variable]!;
-            for (let t = 0; t < count; t++) clock[t]! += d[t]!;
-          }
+          if (variable !== null && variable !== undefined) parts.push(deviations[variable]!);
+          weightedSum(
+            parts.map(() => 1),
+            parts,
+            count,
+            clockTrials[c]!,
+          );
         });
         ends.forEach(({ from, to }, l) => {
           const [a, b, y] = [clockTrials[from]!, clockTrials[to]!, out[l]!];

@@ -4,7 +4,7 @@ import { GRS80 } from '../earth/level-ellipsoid.js';
 import { geopotentialOfNormalHeight } from '../earth/normal-field.js';
 import type { Radians } from '../quantity/radians.js';
 import type { ModelFunction } from './model-function.js';
-import { geopotentialDifference } from './trial-differences.js';
+import { geopotentialDifference, tieDifferences } from './trial-differences.js';
 
 /** Each function here is one way to know a potential, W or a difference of W, from inputs as stated. A `shift` is what the
  *  permanent-tide and frame conversions add to the stated number; heights are converted first, then turned into potential. */
@@ -46,7 +46,8 @@ export function normalHeightFunction(
     differences: (x) => {
       const geopotential = geopotentialDifference(latitudeRad, H(x));
       return ([dW0, dUpper, dLower], count, out) => {
-        for (let t = 0; t < count; t++) out[t] = dW0![t]! - geopotential(dUpper![t]! - (dLower?.[t] ?? 0));
+        if (dLower === undefined) for (let t = 0; t < count; t++) out[t] = dW0![t]! - geopotential(dUpper![t]!);
+        else for (let t = 0; t < count; t++) out[t] = dW0![t]! - geopotential(dUpper![t]! - dLower[t]!);
       };
     },
   };
@@ -141,5 +142,6 @@ export function tieFunction(g: number, gradient: number, steps: readonly number[
       const d = height(x);
       return [-d, 0.5 * d * d, ...steps.map(() => -(x[0]! - x[1]! * d))];
     },
+    differences: (x) => tieDifferences(x[0]!, x[1]!, height(x)),
   };
 }

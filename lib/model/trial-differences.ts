@@ -1,6 +1,7 @@
 import { GRS80 } from '../earth/level-ellipsoid.js';
 import { geopotentialOfNormalHeight } from '../earth/normal-field.js';
 import type { Radians } from '../quantity/radians.js';
+import { weightedSum } from '../uncertainty/monte-carlo/index.js';
 import type { ModelFunction, TrialDifferences } from './model-function.js';
 
 /** How a function of the model moves with its inputs, many trials at a time: by its own fast form if it has one. */
@@ -41,5 +42,23 @@ export function geopotentialDifference(latitudeRad: Radians, normalHeightM: numb
   return (d) => {
     const s = d / REACH_M;
     return d * (g0 + s * (c1 / 2 + s * (c2 / 3 + s * (c3 / 4 + (s * c4) / 5))));
+  };
+}
+
+/** Of −(g·Δ − ½·Γ·Δ²) with g, Γ and the steps of Δ moving: the products are multiplied out, so that nothing cancels. */
+export function tieDifferences(gMs2: number, gradientS2: number, heightM: number): TrialDifferences {
+  return ([dG, dGradient, ...dSteps], count, out) => {
+    weightedSum(
+      dSteps.map(() => 1),
+      dSteps,
+      count,
+      out,
+    );
+    for (let t = 0; t < count; t++) {
+      const d = out[t]!;
+      const height = heightM + d;
+      const squares = gradientS2 * (2 * heightM + d) * d + dGradient![t]! * height * height;
+      out[t] = 0.5 * squares - gMs2 * d - dG![t]! * height;
+    }
   };
 }

@@ -1,6 +1,7 @@
 import { DomainError } from '../distributions/domain-error.js';
 import { symmetricInterval } from './coverage-intervals.js';
 import { numericalTolerance } from './numerical-tolerance.js';
+import { sortNumbers } from './sort-numbers.js';
 
 /** Trials per sequence: max(J, 10⁴), J the smallest whole number not below 100/(1 − p) (JCGM 101:2008, 7.9.4 a, b). */
 export const trialsPerSequence = (probability: number): number => {
@@ -44,7 +45,7 @@ export class Stabilisation {
 
   /** Takes one sequence of trials, which it sorts. */
   add(trials: Float64Array): void {
-    const sorted = trials.sort();
+    const sorted = sortNumbers(trials);
     let sum = 0;
     for (const v of sorted) sum += v;
     const mean = sum / sorted.length;

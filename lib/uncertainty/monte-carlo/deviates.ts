@@ -1,24 +1,20 @@
-import { standardNormalCdf, standardNormalCentre, standardNormalQuantile } from '../distributions/normal.js';
+import { standardNormalCdf, standardNormalCentre } from '../distributions/normal.js';
+import type { Xoshiro128 } from '../random.js';
+import { fillNormalScores } from './normal-scores.js';
 import { TScoreTable } from './t-scores.js';
 import type { Shape } from './trial-input.js';
 
 const SQRT_3 = Math.sqrt(3);
 const SQRT_6 = Math.sqrt(6);
 
-/** Turns draws into deviations from the estimate, in place. Everything goes by the inverse distribution function, one uniform
- *  draw per deviate (JCGM 101:2008, C.2): unlike rejection methods no decision hangs on the last bit of a logarithm, which
- *  differs between engines, so two engines can never fall out of step; and a correlated and an independent draw of one input are
- *  made alike. Normal deviates use +, −, ×, / alone for 85 % of the draws, logarithm and square root for the rest. */
+/** Draws deviations from the estimate. Everything goes by the inverse distribution function, one uniform draw per deviate (JCGM
+ *  101:2008, C.2): unlike rejection methods no decision hangs on the last bit of a logarithm, which differs between engines, so two
+ *  engines can never fall out of step; and a correlated and an independent draw of one input are made alike. */
 export interface Deviates {
-  /** uniform draws on (0, 1) → u × standardised deviates */
-  fromUniforms(draws: Float64Array, count: number): void;
-  /** standard normal scores → u × standardised deviates */
+  /** u × standardised deviates of the generator's next draws */
+  fill(generator: Xoshiro128, out: Float64Array, count: number): void;
+  /** standard normal scores → u × standardised deviates, in place */
   fromScores(scores: Float64Array, count: number): void;
-}
-
-/** Standard normal scores from uniform draws, in place. */
-export function normalScores(draws: Float64Array, count: number): void {
-  for (let i = 0; i < count; i++) draws[i] = standardNormalQuantile(draws[i]!);
 }
 
 /** Deviates of a shape with standard uncertainty u (for t: scale u). */
@@ -26,9 +22,7 @@ export function deviatesOf(shape: Shape, u: number): Deviates {
   switch (shape.kind) {
     case 'normal':
       return {
-        fromUniforms: (draws, count) => {
-          for (let i = 0; i < count; i++) draws[i] = u * standardNormalQuantile(draws[i]!);
-        },
+        fill: (generator, out, count) => fillNormalScores(generator, out, count, u),
         fromScores: (scores, count) => {
           for (let i = 0; i < count; i++) scores[i]! *= u;
         },
@@ -36,8 +30,9 @@ export function deviatesOf(shape: Shape, u: number): Deviates {
     case 'uniform': {
       const width = 2 * SQRT_3 * u;
       return {
-        fromUniforms: (draws, count) => {
-          for (let i = 0; i < count; i++) draws[i] = width * (draws[i]! - 0.5);
+        fill: (generator, out, count) => {
+          generator.fillUniform(out, count);
+          for (let i = 0; i < count; i++) out[i] = width * (out[i]! - 0.5);
         },
         fromScores: (scores, count) => {
           for (let i = 0; i < count; i++) scores[i] = width * standardNormalCentre(scores[i]!);
@@ -48,10 +43,11 @@ export function deviatesOf(shape: Shape, u: number): Deviates {
       // JCGM 101 6.4.4, here from the nearer end: half-width − half-width·√(2·tail).
       const half = SQRT_6 * u;
       return {
-        fromUniforms: (draws, count) => {
+        fill: (generator, out, count) => {
+          generator.fillUniform(out, count);
           for (let i = 0; i < count; i++) {
-            const p = draws[i]!;
-            draws[i] = p < 0.5 ? half * (Math.sqrt(2 * p) - 1) : half * (1 - Math.sqrt(2 * (1 - p)));
+            const p = out[i]!;
+            out[i] = p < 0.5 ? half * (Math.sqrt(2 * p) - 1) : half * (1 - Math.sqrt(2 * (1 - p)));
           }
         },
         fromScores: (scores, count) => {
@@ -66,9 +62,9 @@ export function deviatesOf(shape: Shape, u: number): Deviates {
     case 't': {
       const table = new TScoreTable(shape.dof);
       return {
-        fromUniforms: (draws, count) => {
-          normalScores(draws, count);
-          table.apply(draws, count, u);
+        fill: (generator, out, count) => {
+          fillNormalScores(generator, out, count);
+          table.apply(out, count, u);
         },
         fromScores: (scores, count) => table.apply(scores, count, u),
       };

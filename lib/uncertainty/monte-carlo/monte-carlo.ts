@@ -2,6 +2,7 @@ import { DomainError } from '../distributions/domain-error.js';
 import { normalQuantile } from '../distributions/index.js';
 import { Stabilisation, trialsPerSequence } from './adaptive-stopping.js';
 import {
+  type SortedEnds,
   shortestInterval,
   symmetricInterval,
   symmetricRanks,
@@ -41,7 +42,8 @@ export interface MonteCarloOptions {
   readonly largestNumberOfTrials?: number;
   /** covariance of the outputs from the trials; default: for up to 20 outputs */
   readonly jointCovariance?: boolean;
-  /** numbers to keep at most, over all outputs; beyond it trials are counted in fine cells. Default 2²⁴ (134 MB) */
+  /** trials to keep at most, over all outputs, about the ends of the intervals; beyond it they too are counted in fine cells.
+   *  Default 2²³ (67 MB), enough for 60 outputs of 10⁶ trials */
   readonly keep?: number;
 }
 
@@ -101,8 +103,8 @@ export function* monteCarloSteps(options: MonteCarloOptions): Generator<MonteCar
   const names = model.outputs;
   if (linear.length !== names.length) throw new DomainError('linear', `${linear.length} results`, `${names.length}`);
   const sampler = new Sampler(options.inputs, options.correlations, seed);
-  const limit = Math.floor((options.keep ?? 2 ** 24) / Math.max(1, names.length));
-  const trials = names.map(() => new OutputTrials(auto ? sequence : largest, limit));
+  const limit = Math.floor((options.keep ?? 2 ** 23) / Math.max(1, names.length));
+  const trials = names.map(() => new OutputTrials(coverage, limit, auto ? 0 : largest));
   const moments = existingMoments(options, sampler);
   const stabilisation = auto ? moments.map((m) => new Stabilisation(coverage, m.variance)) : [];
   const joint =
@@ -225,17 +227,16 @@ function outputOf(
     interval: about(symmetric),
     shortest: about(shortest),
     validation: validate(linear, symmetric, errors, digits),
-    histogram: histogramOf(trials),
+    histogram: histogramOf(trials, ends),
   };
 }
 
 /** Bins from the 0.05 % to the 99.95 % quantile. */
-function histogramOf(trials: OutputTrials): Histogram {
+function histogramOf(trials: OutputTrials, known: SortedEnds): Histogram {
   const probability = 0.999;
-  const ends = trials.ends(probability);
-  const { low, high } = symmetricRanks(ends.trials, probability);
-  const from = ends.lowest[Math.min(low, ends.lowest.length - 1)]!;
-  const to = ends.highest[high - (ends.trials - ends.highest.length)]!;
+  const { low, high } = symmetricRanks(trials.count, probability);
+  const covered = low < known.lowest.length && high >= known.trials - known.highest.length;
+  const { low: from, high: to } = symmetricInterval(covered ? known : trials.ends(probability), probability);
   // an output that never moves still gets a bin of some width
   const half = (to - from) / 2 || Math.abs(from) * 1e-9 || 1;
   const middle = (from + to) / 2;

@@ -1,5 +1,8 @@
+import { DomainError } from '../distributions/domain-error.js';
 import type { SortedEnds } from './coverage-intervals.js';
 import { FineHistogram } from './fine-histogram.js';
+import { BLOCK } from './sampler.js';
+import { sortNumbers } from './sort-numbers.js';
 
 /** Counts of trials in equal bins, for drawing. */
 export interface Histogram {
@@ -14,23 +17,56 @@ export interface Histogram {
   readonly above: number;
 }
 
+/** Trials that are kept whole; from them the places of the ends and of the cells are read. */
 const SAMPLE = 10_000;
 
-/** All trials of one output quantity as deviations from its estimate: kept as they are up to a limit, counted in fine cells
- *  beyond it. Mean and variance run along (Chan, Golub & LeVeque 1983, Amer. Statist. 37:242, eq. 2.1). */
+/** A growing list of trials at one end. */
+class Tail {
+  values: Float64Array;
+  count = 0;
+
+  constructor(room: number) {
+    this.values = new Float64Array(room);
+  }
+
+  /** Makes room for so many more. */
+  reserve(more: number): void {
+    if (this.count + more <= this.values.length) return;
+    const larger = new Float64Array(2 * this.values.length + more);
+    larger.set(this.values.subarray(0, this.count));
+    this.values = larger;
+  }
+
+  sorted(): Float64Array {
+    return sortNumbers(this.values.slice(0, this.count));
+  }
+}
+
+/** All trials of one output quantity as deviations from its estimate. The first 10 000 are kept as they are; then only the two ends
+ *  are, with room to spare about the coverage interval, and the rest is counted in fine cells: order statistics of the intervals stay
+ *  exact at an eighth of the memory. Beyond a limit the ends are counted in the cells too.
+ *  Mean and variance run along (Chan, Golub & LeVeque 1983, Amer. Statist. 37:242, eq. 2.1). */
 export class OutputTrials {
+  readonly #coverage: number;
   readonly #limit: number;
-  #kept: Float64Array;
+  readonly #expected: number;
+  #kept = new Float64Array(0);
   #fine: FineHistogram | null = null;
+  #lowest: Tail | null = null;
+  #highest: Tail | null = null;
+  #lowThreshold = 0;
+  #highThreshold = 0;
   #count = 0;
   #mean = 0;
   #squares = 0;
 
-  /** @param expected trials to make room for at once
-   *  @param limit largest number of trials to keep, at least 10 000 */
-  constructor(expected: number, limit: number) {
-    this.#limit = Math.max(SAMPLE, limit);
-    this.#kept = new Float64Array(Math.min(expected, this.#limit));
+  /** @param coverage probability of the intervals that will be asked for
+   *  @param limit largest number of trials to keep as they are
+   *  @param expected number of trials to come, as far as known: room is made for them at once */
+  constructor(coverage: number, limit: number, expected = 0) {
+    this.#coverage = coverage;
+    this.#limit = limit;
+    this.#expected = expected;
   }
 
   get count(): number {
@@ -46,83 +82,131 @@ export class OutputTrials {
     return this.#squares / (this.#count - 1);
   }
 
-  /** Width of the cells in which trials are counted; 0 while they are all kept. */
+  /** Width of the cells to which the ends are known; 0 while they are known exactly. */
   get resolution(): number {
-    return this.#fine?.cellWidth ?? 0;
+    return this.#fine && !this.#lowest ? this.#fine.cellWidth : 0;
   }
 
+  /** Adds values[0 … count−1]; at most a thousand at a time, so that the first sample can be had. */
   add(values: Float64Array, count: number): void {
+    if (count > BLOCK) throw new DomainError('count', count, `at most ${BLOCK}`);
+    // About the mean so far, so that the block's own mean is small against its spread and one pass is enough.
+    const centre = this.#count > 0 ? this.#mean : values[0]!;
     let sum = 0;
-    for (let i = 0; i < count; i++) sum += values[i]!;
-    const mean = sum / count;
     let squares = 0;
     for (let i = 0; i < count; i++) {
-      const d = values[i]! - mean;
+      const d = values[i]! - centre;
+      sum += d;
       squares += d * d;
     }
+    squares -= (sum * sum) / count;
     const total = this.#count + count;
-    const shift = mean - this.#mean;
+    const shift = centre + sum / count - this.#mean;
     this.#squares += squares + (shift * shift * this.#count * count) / total;
     this.#mean += (shift * count) / total;
-    if (!this.#fine && total > this.#limit) {
-      this.#fine = new FineHistogram(this.#kept.slice(0, Math.min(SAMPLE, this.#count)).sort());
-      this.#fine.add(this.#kept, this.#count);
-      this.#kept = new Float64Array(0);
-    }
-    if (this.#fine) this.#fine.add(values, count);
-    else {
-      if (total > this.#kept.length) {
-        const larger = new Float64Array(Math.min(this.#limit, Math.max(total, 2 * this.#kept.length)));
-        larger.set(this.#kept.subarray(0, this.#count));
-        this.#kept = larger;
-      }
+    if (!this.#fine && total > SAMPLE) this.#startCounting();
+    if (this.#fine) {
+      this.#fine.add(values, count);
+      this.#addEnds(values, count);
+    } else {
+      if (this.#kept.length === 0) this.#kept = new Float64Array(SAMPLE);
       this.#kept.set(values.subarray(0, count), this.#count);
     }
     this.#count = total;
   }
 
+  #startCounting(): void {
+    const first = this.#kept.subarray(0, this.#count);
+    const sorted = first.slice().sort();
+    this.#fine = new FineHistogram(sorted);
+    this.#fine.add(first, first.length);
+    // A fifth more than the intervals need, and 50 for small numbers: six standard deviations of what the sample can be off.
+    const rank = Math.ceil(1.2 * (1 - this.#coverage) * sorted.length) + 50;
+    if (this.#fine.cellWidth > 0 && 4 * rank < sorted.length) {
+      this.#lowThreshold = sorted[rank]!;
+      this.#highThreshold = sorted[sorted.length - 1 - rank]!;
+      const room = Math.min(this.#limit, Math.ceil((1.1 * rank * this.#expected) / sorted.length)) + BLOCK;
+      this.#lowest = new Tail(room);
+      this.#highest = new Tail(room);
+      this.#addEnds(first, first.length);
+    }
+    this.#kept = new Float64Array(0);
+  }
+
+  /** Keeps what lies beyond the thresholds. Written so that the loop doesn't branch: every value is put down, and the place moves on
+   *  only if it is to stay. */
+  #addEnds(values: Float64Array, count: number): void {
+    const lowest = this.#lowest;
+    const highest = this.#highest;
+    if (!lowest || !highest) return;
+    lowest.reserve(count);
+    highest.reserve(count);
+    const low = this.#lowThreshold;
+    const high = this.#highThreshold;
+    const l = lowest.values;
+    const h = highest.values;
+    let nl = lowest.count;
+    let nh = highest.count;
+    for (let i = 0; i < count; i++) {
+      const v = values[i]!;
+      l[nl] = v;
+      nl += v <= low ? 1 : 0;
+      h[nh] = v;
+      nh += v >= high ? 1 : 0;
+    }
+    lowest.count = nl;
+    highest.count = nh;
+    if (nl + nh > this.#limit) {
+      this.#lowest = null;
+      this.#highest = null;
+    }
+  }
+
   /** The trials sorted, as far as an interval of that coverage needs them. */
   ends(probability: number): SortedEnds {
     const trials = this.#count;
-    const wanted = Math.min(trials, Math.ceil((1 - probability) * trials) + 2);
-    if (this.#fine) return { trials, lowest: this.#fine.lowest(wanted), highest: this.#fine.highest(wanted) };
-    const all = this.#kept.subarray(0, trials);
-    // Sorting only the ends is several times faster: thresholds well inside them are read off the first trials.
-    const sample = all.slice(0, SAMPLE).sort();
-    const rank = Math.ceil(1.5 * (1 - probability) * sample.length) + 50;
-    if (trials > 2 * SAMPLE && 2 * rank < sample.length) {
-      const lowest = between(all, -Infinity, sample[rank]!);
-      const highest = between(all, sample[sample.length - 1 - rank]!, Infinity);
-      if (lowest.length >= wanted && highest.length >= wanted) return { trials, lowest, highest };
+    if (!this.#fine) {
+      const sorted = this.#kept.slice(0, trials).sort();
+      return { trials, lowest: sorted, highest: sorted };
     }
-    const sorted = all.slice().sort();
-    return { trials, lowest: sorted, highest: sorted };
-  }
-
-  /** @param low,high edges, as deviations from the estimate, low < high */
-  histogram(low: number, high: number, bins: number): Histogram {
-    const counts = new Array<number>(bins).fill(0);
-    const perBin = bins / (high - low);
-    let below = 0;
-    let above = 0;
-    const visit = (value: number, count: number): void => {
-      if (value < low) below += count;
-      else if (value > high) above += count;
-      else counts[Math.min(bins - 1, Math.floor((value - low) * perBin))]! += count;
+    const wanted = Math.min(trials, Math.ceil((1 - probability) * trials) + 2);
+    const enough = (tail: Tail | null): tail is Tail => tail !== null && tail.count >= wanted;
+    return {
+      trials,
+      lowest: enough(this.#lowest) ? this.#lowest.sorted() : this.#fine.lowest(wanted),
+      highest: enough(this.#highest) ? this.#highest.sorted() : this.#fine.highest(wanted),
     };
-    if (this.#fine) this.#fine.forEach(visit);
-    else for (let i = 0; i < this.#count; i++) visit(this.#kept[i]!, 1);
-    return { low, high, counts, densities: counts.map((c) => (c / this.#count) * perBin), below, above };
   }
-}
 
-/** The values from low to high, both included, rising. */
-function between(values: Float64Array, low: number, high: number): Float64Array {
-  const found = new Float64Array(values.length);
-  let n = 0;
-  for (let i = 0; i < values.length; i++) {
-    const v = values[i]!;
-    if (v >= low && v <= high) found[n++] = v;
+  /** About `bins` equal bins that hold everything from … to, deviations from the estimate, from < to. */
+  histogram(from: number, to: number, bins: number): Histogram {
+    if (!this.#fine) {
+      const counts = new Array<number>(bins).fill(0);
+      const width = (to - from) / bins;
+      let below = 0;
+      let above = 0;
+      for (let i = 0; i < this.#count; i++) {
+        const v = this.#kept[i]!;
+        if (v < from) below++;
+        else if (v > to) above++;
+        else counts[Math.min(bins - 1, Math.floor((v - from) / width))]! += 1;
+      }
+      return { low: from, high: to, counts, densities: this.#densities(counts, width), below, above };
+    }
+    const { low, width, counts } = this.#fine.binned(from, to, bins);
+    const below = this.#fine.countBelow(low);
+    const inside = counts.reduce((s, c) => s + c, 0);
+    return {
+      low,
+      high: low + bins * width,
+      counts,
+      densities: this.#densities(counts, width),
+      below,
+      above: this.#count - below - inside,
+    };
   }
-  return found.slice(0, n).sort();
+
+  #densities(counts: readonly number[], width: number): number[] {
+    return counts.map((c) => c / (this.#count * width));
+  }
 }

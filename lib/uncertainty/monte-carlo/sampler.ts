@@ -3,7 +3,8 @@ import { DomainError } from '../distributions/domain-error.js';
 import { zeros } from '../matrix.js';
 import { Xoshiro128 } from '../random.js';
 import { CopulaCorrelations } from './copula-correlation.js';
-import { type Deviates, deviatesOf, normalScores } from './deviates.js';
+import { type Deviates, deviatesOf } from './deviates.js';
+import { fillNormalScores } from './normal-scores.js';
 import { pivotedCholesky } from './pivoted-cholesky.js';
 import { type Shape, shapeOf, type TrialCorrelation, type TrialInput } from './trial-input.js';
 import { weightedSum } from './weighted-sum.js';
@@ -69,14 +70,11 @@ export class Sampler {
   /** Draws the next `count` ≤ BLOCK trials into `deviations`. */
   draw(count: number): void {
     for (const { input, stream, deviates } of this.#independent) {
-      const out = this.deviations[input]!;
-      stream.fillUniform(out, count);
-      deviates.fromUniforms(out, count);
+      deviates.fill(stream, this.deviations[input]!, count);
     }
     for (const { inputs, streams, rows, deviates } of this.#groups) {
       streams.forEach((stream, k) => {
-        stream.fillUniform(this.#scores[k]!, count);
-        normalScores(this.#scores[k]!, count);
+        fillNormalScores(stream, this.#scores[k]!, count);
       });
       inputs.forEach((input, i) => {
         const out = this.deviations[input]!;

@@ -1,5 +1,6 @@
 import { standardNormalCdf, standardNormalCentre } from '../distributions/normal.js';
 import { studentTQuantile } from '../distributions/student-t.js';
+import { polynomialFit } from './polynomial-fit.js';
 
 /** t_ν at the normal score z, exactly: the t with the same probability below it as z has. Odd in z. */
 export function tAtNormalScore(z: number, nu: number): number {
@@ -23,13 +24,12 @@ export class TScoreTable {
 
   constructor(nu: number) {
     this.#nu = nu;
-    const nodes = Array.from({ length: COEFFICIENTS }, (_, k) => Math.cos((Math.PI * (k + 0.5)) / COEFFICIENTS));
     for (let cell = 0; cell < CELLS; cell++) {
-      const values = nodes.map((x) => {
-        const z = (cell + 0.5 + 0.5 * x) / CELLS_PER_UNIT;
+      const logRatio = (x: number): number => {
+        const z = (cell + x) / CELLS_PER_UNIT;
         return Math.log(tAtNormalScore(z, nu) / z);
-      });
-      this.#table.set(interpolate(nodes, values), cell * COEFFICIENTS);
+      };
+      this.#table.set(polynomialFit(logRatio, DEGREE), cell * COEFFICIENTS);
     }
   }
 
@@ -45,7 +45,7 @@ export class TScoreTable {
         z[i] = scale * tAtNormalScore(score, this.#nu);
         continue;
       }
-      const x = 2 * (position - cell) - 1;
+      const x = position - cell;
       const k = cell * COEFFICIENTS;
       const log =
         ((((table[k + 5]! * x + table[k + 4]!) * x + table[k + 3]!) * x + table[k + 2]!) * x + table[k + 1]!) * x +
@@ -53,19 +53,4 @@ export class TScoreTable {
       z[i] = scale * score * Math.exp(log);
     }
   }
-}
-
-/** Coefficients of the polynomial through the points, lowest power first (Newton's divided differences, expanded). */
-function interpolate(x: readonly number[], y: readonly number[]): Float64Array {
-  const n = x.length;
-  const d = y.slice();
-  for (let order = 1; order < n; order++) {
-    for (let i = n - 1; i >= order; i--) d[i] = (d[i]! - d[i - 1]!) / (x[i]! - x[i - order]!);
-  }
-  const c = new Float64Array(n);
-  for (let i = n - 1; i >= 0; i--) {
-    for (let k = n - 1; k > 0; k--) c[k] = c[k - 1]! - x[i]! * c[k]!;
-    c[0] = d[i]! - x[i]! * c[0]!;
-  }
-  return c;
 }

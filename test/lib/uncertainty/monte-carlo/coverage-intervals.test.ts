@@ -6,9 +6,10 @@ import {
   symmetricRanks,
   symmetricStandardErrors,
 } from '../../../../lib/uncertainty/monte-carlo/coverage-intervals.js';
-import { normalScores } from '../../../../lib/uncertainty/monte-carlo/deviates.js';
+import { fillNormalScores } from '../../../../lib/uncertainty/monte-carlo/normal-scores.js';
 import { numericalTolerance } from '../../../../lib/uncertainty/monte-carlo/numerical-tolerance.js';
 import { OutputTrials } from '../../../../lib/uncertainty/monte-carlo/output-trials.js';
+import { sortNumbers } from '../../../../lib/uncertainty/monte-carlo/sort-numbers.js';
 import { validate } from '../../../../lib/uncertainty/monte-carlo/validation.js';
 import { Xoshiro128 } from '../../../../lib/uncertainty/random.js';
 import { expectRelative, expectWithin } from '../expect-relative.js';
@@ -17,8 +18,7 @@ const whole = (values: Float64Array) => ({ trials: values.length, lowest: values
 
 function normals(count: number, seed: number): Float64Array {
   const out = new Float64Array(count);
-  Xoshiro128.fromSeed(seed).fillUniform(out, count);
-  normalScores(out, count);
+  fillNormalScores(Xoshiro128.fromSeed(seed), out, count);
   return out;
 }
 
@@ -50,76 +50,141 @@ describe('coverage intervals from sorted trials', () => {
   });
 });
 
+describe('sorting numbers', () => {
+  it('orders as the general sort does: normals, few, lumps, far outliers, all equal, infinities', () => {
+    const lumps = normals(5000, 3).map((z) => Math.round(z));
+    const outliers = normals(5000, 4);
+    outliers[7] = 1e30;
+    const infinite = normals(2000, 4);
+    infinite[9] = -Infinity;
+    for (const values of [
+      normals(5000, 1),
+      normals(999, 2),
+      lumps,
+      outliers,
+      infinite,
+      new Float64Array(3000).fill(0.3),
+      Float64Array.of(),
+    ]) {
+      expect(sortNumbers(values.slice())).toEqual(values.slice().sort());
+    }
+  });
+});
+
 describe('trials of one output', () => {
-  const values = normals(60_000, 11).map((z) => 3 + 0.5 * z ** 2 + z);
-  const filled = (limit: number) => {
-    const trials = new OutputTrials(60_000, limit);
-    for (let i = 0; i < values.length; i += 1000) trials.add(values.subarray(i, i + 1000), 1000);
+  const N = 60_000;
+  const values = normals(N, 11).map((z) => 3 + 0.5 * z ** 2 + z);
+  const sorted = values.slice().sort();
+  const filled = (limit: number, coverage = 0.95, block = 1000) => {
+    const trials = new OutputTrials(coverage, limit);
+    for (let i = 0; i < N; i += block) trials.add(values.subarray(i, i + block), Math.min(block, N - i));
     return trials;
   };
-  const sorted = values.slice().sort();
 
-  it('gives the ends as a full sort does, kept or grown on the way', () => {
-    const grown = new OutputTrials(10, 1e6);
-    for (let i = 0; i < values.length; i += 500) grown.add(values.subarray(i, i + 500), 500);
-    for (const trials of [filled(1e6), grown]) {
+  it('gives the ends as a full sort does, in blocks of any length', () => {
+    for (const block of [1000, 700, 37]) {
+      const trials = filled(1e6, 0.95, block);
       expect(trials.resolution).toBe(0);
       expect(symmetricInterval(trials.ends(0.95), 0.95)).toEqual(symmetricInterval(whole(sorted), 0.95));
       expect(shortestInterval(trials.ends(0.95), 0.95)).toEqual(shortestInterval(whole(sorted), 0.95));
-      expect(symmetricInterval(trials.ends(0.4), 0.4)).toEqual(symmetricInterval(whole(sorted), 0.4));
+      expect(symmetricInterval(trials.ends(0.999), 0.999)).toEqual(symmetricInterval(whole(sorted), 0.999));
     }
   });
 
-  it('counts in cells beyond the limit: the same moments, end points within one cell', () => {
+  it('gives them exactly of few trials, whatever the coverage', () => {
+    const few = new OutputTrials(0.95, 1e6);
+    for (let i = 0; i < 9000; i += 1000) few.add(values.subarray(i, i + 1000), 1000);
+    const all = values.slice(0, 9000).sort();
+    expect(symmetricInterval(few.ends(0.3), 0.3)).toEqual(symmetricInterval(whole(all), 0.3));
+    const h = few.histogram(2.5, 6, 35);
+    expect(h.counts[3]).toBe(all.filter((v) => v >= 2.8 && v < 2.9).length);
+    expect(h.below).toBe(all.filter((v) => v < 2.5).length);
+    expect(h.above).toBe(all.filter((v) => v > 6).length);
+  });
+
+  it('counts in cells beyond the limit, or for a low coverage: the same moments, end points within one cell', () => {
     const exact = filled(1e6);
-    const counted = filled(20_000);
-    expect(counted.resolution).toBeGreaterThan(0);
-    expect(counted.resolution).toBeLessThan(1e-3);
-    expect(counted.mean).toBe(exact.mean);
-    expect(counted.variance).toBe(exact.variance);
-    for (const p of [0.5, 0.95, 0.9999]) {
-      const a = symmetricInterval(exact.ends(p), p);
-      const b = symmetricInterval(counted.ends(p), p);
-      expectWithin(b.low, a.low, counted.resolution);
-      expectWithin(b.high, a.high, counted.resolution);
-      expectWithin(
-        shortestInterval(counted.ends(p), p).high - shortestInterval(counted.ends(p), p).low,
-        shortestInterval(exact.ends(p), p).high - shortestInterval(exact.ends(p), p).low,
-        2 * counted.resolution,
-      );
+    for (const [counted, coverages] of [
+      [filled(5000), [0.5, 0.95, 0.9999]],
+      [filled(1e6, 0.5), [0.5, 0.2]],
+    ] as const) {
+      expect(counted.resolution).toBeGreaterThan(0);
+      expect(counted.resolution).toBeLessThan(5e-3);
+      expect(counted.mean).toBe(exact.mean);
+      expect(counted.variance).toBe(exact.variance);
+      for (const p of coverages) {
+        const a = symmetricInterval(whole(sorted), p);
+        const b = symmetricInterval(counted.ends(p), p);
+        expectWithin(b.low, a.low, counted.resolution);
+        expectWithin(b.high, a.high, counted.resolution);
+        const [s, t] = [shortestInterval(whole(sorted), p), shortestInterval(counted.ends(p), p)];
+        expectWithin(t.high - t.low, s.high - s.low, 2 * counted.resolution);
+      }
     }
-    const coarse = exact.histogram(2.5, 6, 50);
-    const same = counted.histogram(2.5, 6, 50);
-    const shifted = coarse.counts.reduce((sum, c, i) => sum + Math.abs(c - same.counts[i]!), 0);
-    expect(shifted).toBeLessThan(200); // trials that cross a bin's edge by half a cell
-    expect(same.counts.reduce((s, c) => s + c, same.below + same.above)).toBe(60_000);
   });
 
-  it('keeps far outliers as they are when counting', () => {
-    const trials = new OutputTrials(20_000, 10_000);
-    const block = normals(10_000, 5);
-    trials.add(block, 10_000);
-    trials.add(Float64Array.of(1e9, -1e12), 2);
-    trials.add(block, 10_000);
+  it('keeps far outliers as they are, in the ends and when counting', () => {
+    for (const limit of [1e6, 100]) {
+      const trials = new OutputTrials(0.95, limit);
+      const z = normals(12_000, 5);
+      for (let i = 0; i < 12_000; i += 1000) trials.add(z.subarray(i, i + 1000), 1000);
+      trials.add(Float64Array.of(1e9, -1e12), 2);
+      const ends = trials.ends(0.95);
+      expect(ends.lowest[0]).toBe(-1e12);
+      expect(ends.highest.at(-1)).toBe(1e9);
+    }
+  });
+
+  it('is exact for an output that never moves, and for one that hardly ever does', () => {
+    const trials = new OutputTrials(0.95, 100);
+    const block = new Float64Array(1000).fill(0.3);
+    for (let i = 0; i < 30; i++) trials.add(block, 1000);
+    expect(trials.resolution).toBe(0);
+    expect(symmetricInterval(trials.ends(0.95), 0.95)).toEqual({ low: 0.3, high: 0.3 });
+    trials.add(Float64Array.of(-5, 7, 8), 3);
     const ends = trials.ends(0.95);
-    expect(ends.lowest[0]).toBe(-1e12);
-    expect(ends.highest.at(-1)).toBe(1e9);
+    expect(ends.lowest.slice(0, 2)).toEqual(Float64Array.of(-5, 0.3));
+    expect(ends.highest.slice(-3)).toEqual(Float64Array.of(0.3, 7, 8));
+    const h = trials.histogram(0, 1, 10);
+    expect(h.counts).toEqual(
+      [0, 0, 0, 30_000, 0, 0, 0, 0, 0, 0].map((c, i) => (i === 3 || i === 2 ? h.counts[i]! : c)),
+    );
+    expect(h.counts[2]! + h.counts[3]!).toBe(30_000);
+    expect([h.below, h.above]).toEqual([1, 2]);
   });
 
   it('has mean and variance of the textbook, far from zero too', () => {
-    const trials = new OutputTrials(4, 1e6);
+    const trials = new OutputTrials(0.95, 1e6);
     for (const v of [1e9 + 4, 1e9 + 7, 1e9 + 13, 1e9 + 16]) trials.add(Float64Array.of(v), 1);
     expect(trials.mean).toBe(1e9 + 10);
     expect(trials.variance).toBe(30);
     expect(trials.count).toBe(4);
+    const all = filled(1e6);
+    const mean = values.reduce((s, v) => s + v, 0) / N;
+    expectRelative(all.mean, mean, 1e-12);
+    expectRelative(all.variance, values.reduce((s, v) => s + (v - mean) ** 2, 0) / (N - 1), 1e-12);
   });
 
-  it('makes densities that add up to the part inside', () => {
-    const h = filled(1e6).histogram(2.5, 6, 40);
-    const inside = h.counts.reduce((s, c) => s + c, 0);
-    expect(inside + h.below + h.above).toBe(60_000);
-    expectRelative(h.densities.reduce((s, d) => s + d, 0) * (3.5 / 40), inside / 60_000, 1e-12);
-    expect(h.below).toBe(sorted.findIndex((v) => v >= 2.5));
+  it('bins whole cells, so that every trial is on the right side of every edge', () => {
+    for (const limit of [1e6, 5000]) {
+      const h = filled(limit).histogram(2.5, 6, 40);
+      const width = (h.high - h.low) / 40;
+      expectWithin(h.low, 2.5, 5e-3);
+      expect(h.high).toBeGreaterThanOrEqual(6 - 5e-3);
+      expect(h.high).toBeLessThan(6.2);
+      h.counts.forEach((c, i) => {
+        // a trial may lie on the other side of an edge by rounding of the edge itself
+        const inside = sorted.filter((v) => v >= h.low + i * width && v < h.low + (i + 1) * width).length;
+        expectWithin(c, inside, 1);
+      });
+      expect(h.counts.reduce((s, c) => s + c, h.below + h.above)).toBe(N);
+      expectWithin(h.below, sorted.filter((v) => v < h.low).length, 1);
+      expectRelative(h.densities[7]!, h.counts[7]! / N / width, 1e-12);
+    }
+  });
+
+  it('refuses more than a thousand at a time', () => {
+    expect(() => new OutputTrials(0.95, 1e6).add(values, 1001)).toThrow('count = 1001');
   });
 });
 
@@ -184,8 +249,7 @@ describe('adaptive stopping, JCGM 101:2008, 7.9.4', () => {
       const generator = Xoshiro128.fromSeed(seed);
       for (let h = 1; ; h++) {
         const out = new Float64Array(10_000);
-        generator.fillUniform(out, 10_000);
-        normalScores(out, 10_000);
+        fillNormalScores(generator, out, 10_000);
         watch.add(out.map((z) => 2 * z));
         if (watch.isStable(2, 2)) return h;
       }

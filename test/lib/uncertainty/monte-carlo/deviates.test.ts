@@ -1,8 +1,10 @@
 import { describe, it } from 'vitest';
-import { normalCdf, studentTCdf } from '../../../../lib/uncertainty/distributions/index.js';
+import { normalCdf, normalQuantile, studentTCdf } from '../../../../lib/uncertainty/distributions/index.js';
 import { deviatesOf } from '../../../../lib/uncertainty/monte-carlo/deviates.js';
+import { fillNormalScores, normalScore } from '../../../../lib/uncertainty/monte-carlo/normal-scores.js';
 import { TScoreTable, tAtNormalScore } from '../../../../lib/uncertainty/monte-carlo/t-scores.js';
 import type { Shape } from '../../../../lib/uncertainty/monte-carlo/trial-input.js';
+import { Xoshiro128 } from '../../../../lib/uncertainty/random.js';
 import { expectRelative, expectWithin } from '../expect-relative.js';
 
 const U = 0.7;
@@ -23,36 +25,65 @@ const shapes: [Shape, (x: number) => number][] = [
 
 describe('deviates by the inverse distribution function', () => {
   it('come back to the uniform draw under the distribution function', () => {
-    const draws = Float64Array.of(1.2e-16, 1e-9, 0.003, 0.074, 0.2, 0.4999999, 0.5, 0.61, 0.93, 0.99999);
+    const n = 2000;
     for (const [shape, cdf] of shapes) {
-      const d = draws.slice();
-      deviatesOf(shape, U).fromUniforms(d, d.length);
-      d.forEach((x, i) => {
-        // the triangular and uniform functions above lose the far lower tail to 1 + s
-        const tolerance = shape.kind === 'normal' || shape.kind === 't' ? 1e-10 * draws[i]! : 2e-16 + 1e-12 * draws[i]!;
-        expectWithin(cdf(x), draws[i]!, tolerance, `${shape.kind} at ${draws[i]}`);
-      });
+      const draws = new Float64Array(n);
+      Xoshiro128.fromSeed(6).fillUniform(draws, n);
+      const d = new Float64Array(n);
+      deviatesOf(shape, U).fill(Xoshiro128.fromSeed(6), d, n);
+      for (let i = 0; i < n; i++)
+        expectWithin(cdf(d[i]!), draws[i]!, 1e-11 * draws[i]! + 2e-16, `${shape.kind} at ${draws[i]}`);
     }
   });
 
-  it('are the same from a normal score as from its probability', () => {
-    const scores = Float64Array.of(-8, -3.2, -0.7, -0.01, 0, 0.3, 1.96, 5);
+  it('are the same from a normal score as from its draw', () => {
+    const n = 500;
     for (const [shape] of shapes) {
-      const direct = scores.slice();
-      deviatesOf(shape, U).fromScores(direct, scores.length);
-      const through = scores.map(normalCdf);
-      deviatesOf(shape, U).fromUniforms(through, scores.length);
-      direct.forEach((x, i) => {
-        expectWithin(x, through[i]!, 1e-8 * Math.abs(x) + 1e-15, `${shape.kind} at ${scores[i]}`);
-      });
+      const direct = new Float64Array(n);
+      deviatesOf(shape, U).fill(Xoshiro128.fromSeed(6), direct, n);
+      const through = new Float64Array(n);
+      fillNormalScores(Xoshiro128.fromSeed(6), through, n);
+      deviatesOf(shape, U).fromScores(through, n);
+      for (let i = 0; i < n; i++) expectWithin(through[i]!, direct[i]!, 1e-11 * (1 + Math.abs(direct[i]!)), shape.kind);
     }
   });
 
-  it('leave the rest of a longer array alone', () => {
+  it('leave the rest of a longer array alone, and take as many draws as they make deviates', () => {
     for (const [shape] of shapes) {
+      const generator = Xoshiro128.fromSeed(8);
       const d = Float64Array.of(0.3, 0.4, 0.25);
-      deviatesOf(shape, U).fromUniforms(d, 2);
+      deviatesOf(shape, U).fill(generator, d, 2);
       expectWithin(d[2]!, 0.25, 0);
+      const other = Xoshiro128.fromSeed(8);
+      other.fillUniform(d, 2);
+      expectWithin(generator.nextUint32(), other.nextUint32(), 0);
+    }
+  });
+});
+
+describe('table of normal scores', () => {
+  it('agrees with AS 241 to 1e-12 relative, 3e-14 between 1/16 and 15/16, at the seams of its cells too', () => {
+    const tails = [
+      3e-16,
+      7.4e-9,
+      7.45e-9,
+      7.46e-9,
+      2 ** -27,
+      1e-6,
+      0.001,
+      0.0312,
+      1 / 32,
+      0.03126,
+      0.06,
+      0.0624999,
+      1 / 16,
+    ];
+    for (const p of tails) {
+      expectRelative(normalScore(p), normalQuantile(p), 1e-12, `at ${p}`);
+      expectRelative(normalScore(1 - p), normalQuantile(1 - p), 1e-12, `at 1 − ${p}`);
+    }
+    for (const p of [1 / 16, 0.0625001, 0.1, 0.25, 0.2500001, 0.4999, 0.5, 0.50001, 0.77, 15 / 16 - 1e-12]) {
+      expectWithin(normalScore(p), normalQuantile(p), 3e-14, `at ${p}`);
     }
   });
 });
