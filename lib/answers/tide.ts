@@ -2,11 +2,11 @@ import type { Campaign, Link, TimeInterval } from '../campaign/campaign.js';
 import { CampaignError, faultAt, type Warning } from '../campaign/fault.js';
 import { intersectionOfIntervals } from '../clocks/intervals.js';
 import { SPEED_OF_LIGHT_SQUARED_M2_PER_S2 } from '../constants/defining-constants.js';
-import { FeltTide } from '../earth/earth-tide/felt-tide.js';
 import { omittedTide, totalOmittedM2s2 } from '../earth/earth-tide/omitted-tide.js';
 import { TIDE_FIRST_MS, TIDE_LAST_MS } from '../earth/earth-tide/sun-and-moon.js';
 import { GRS80 } from '../earth/level-ellipsoid.js';
 import { normalGravity } from '../earth/normal-field.js';
+import { feltTideAtSites } from '../model/felt-tide-at-sites.js';
 import { statedHeightM } from '../model/first-determination.js';
 import { meanOverIntervals } from './mean-over-intervals.js';
 
@@ -74,15 +74,7 @@ export function tide(campaign: Campaign, stepS: number = TIDE_STEP_S): TideAnswe
   const siteIndex = new Map(campaign.sites.map((s, i) => [s.id, i]));
   const siteOfClock = new Map(campaign.clocks.map((c) => [c.id, siteIndex.get(c.site)!]));
   const ends = campaign.links.map((l) => ({ a: siteOfClock.get(l.from)!, b: siteOfClock.get(l.to)! }));
-  const felt = new FeltTide(
-    campaign.sites.map((site) => ({
-      ...site,
-      heightM: site.h?.value ?? statedHeightM(campaign, site),
-      oceanLoading: site.oceanLoading ?? [],
-    })),
-    campaign.love,
-    campaign.pole ?? [],
-  );
+  const felt = feltTideAtSites(campaign);
 
   const times = sampleTimes(window, stepS);
   const series = campaign.links.map(() => new Array<number>(times.length));

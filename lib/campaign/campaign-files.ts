@@ -1,3 +1,4 @@
+import type { FrequencySeries } from '../clocks/series/frequency-series.js';
 import type { GeoidSurface } from '../earth/geoid-grid/geoid-grid.js';
 import type { GridExcerpt } from '../earth/geoid-grid/interpolation.js';
 import type { Radians } from '../quantity/radians.js';
@@ -52,6 +53,15 @@ export interface GravityModelReading {
   readonly warnings: readonly Warning[];
 }
 
+/** What a campaign asks of a file of frequency data. */
+export interface SeriesRequest {
+  readonly file: string;
+  /** words of the columns; guessed if absent */
+  readonly columns?: string;
+  /** sampling interval, s */
+  readonly tauS?: number;
+}
+
 /** Something that was refused while a file was read; paths are those inside the file. */
 export interface RefusedFile {
   readonly faults: readonly Fault[];
@@ -61,7 +71,8 @@ export interface RefusedFile {
 export interface CampaignFiles {
   grid(request: GridRequest): GridReading | RefusedFile | null;
   gravityModel(request: GravityModelRequest): GravityModelReading | RefusedFile | null;
+  series(request: SeriesRequest): FrequencySeries | RefusedFile | null;
 }
 
 /** No file beside the campaign: nodes that it keeps itself are used, anything else is refused. */
-export const NO_FILES: CampaignFiles = { grid: () => null, gravityModel: () => null };
+export const NO_FILES: CampaignFiles = { grid: () => null, gravityModel: () => null, series: () => null };

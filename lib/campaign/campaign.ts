@@ -1,5 +1,6 @@
 import type { FlywheelNoise } from '../clocks/dead-time.js';
 import type { FibreNoise } from '../clocks/fibre-noise.js';
+import type { MeanBasis } from '../clocks/mean-uncertainty.js';
 import type { OceanLoadingConstituent } from '../earth/earth-tide/ocean-loading.js';
 import type { PolePosition } from '../earth/earth-tide/pole-tide.js';
 import type { GridExcerpt, InterpolationMethod } from '../earth/geoid-grid/interpolation.js';
@@ -315,10 +316,38 @@ export interface Link extends Instrument {
   readonly transported?: TransportedClock;
 }
 
+/** The file of frequency data that a y is the mean of, and what its reduction left out. */
+export interface SeriesUse extends Remarks {
+  readonly file: string;
+  /** words of its columns, as stated */
+  readonly columns?: string;
+  /** sampling interval as stated, s */
+  readonly tauS?: number;
+  /** there once the campaign has been read */
+  readonly reduced?: SeriesReduction;
+}
+
+/** How a series became its mean. */
+export interface SeriesReduction {
+  /** how u of the mean was come by, and that in words */
+  readonly basis: MeanBasis;
+  readonly words: string;
+  /** samples used, and left out for lying outside the validity */
+  readonly samples: number;
+  readonly outside: number;
+  /** time of the samples used; what is missing between the first and the last */
+  readonly validS: number;
+  readonly deadS: number;
+  /** mean of the tide that was taken off; null for a file without dates */
+  readonly tideMean: number | null;
+}
+
 export interface Measurement extends Remarks {
   readonly id: string | null;
   readonly link: string;
+  /** as stated, or the mean of `series` in mean tide */
   readonly y: Measured;
+  readonly series?: SeriesUse;
   readonly includesSystematic: boolean;
   readonly check: boolean;
   readonly startMs: number | null;

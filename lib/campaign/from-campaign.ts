@@ -13,6 +13,7 @@ import type {
   Measurement,
   Remarks,
   Route,
+  SeriesUse,
   Site,
   Source,
   Stability,
@@ -301,10 +302,16 @@ const fromLink = (l: Link): ReadOf<typeof link> => ({
 
 const withoutTide = (m: Measured): Measured => ({ ...m, tide: null });
 
+const fromSeries = (s: SeriesUse): NonNullable<ReadOf<typeof measurement>['series']> => ({
+  file: s.file,
+  ...told({ columns: s.columns, tau: s.tauS }),
+  ...remarksOf(s),
+});
+
 const fromMeasurement = (m: Measurement): ReadOf<typeof measurement> => ({
   ...told({ id: m.id }),
   link: m.link,
-  y: withoutTide(m.y),
+  ...(m.series ? { series: fromSeries(m.series) } : { y: withoutTide(m.y) }),
   ...told({ tide: m.y.tide, includesSystematic: m.includesSystematic }),
   ...(m.check ? { use: 'check' as const } : {}),
   ...(m.startMs === null ? {} : { start: m.startMs }),

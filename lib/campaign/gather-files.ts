@@ -1,3 +1,4 @@
+import { type FrequencySeries, FrequencySeriesParser, readColumnWords } from '../clocks/series/index.js';
 import { type ByteSource, piecesOf } from '../earth/file-bytes/byte-source.js';
 import { type GeoidGrid, gridExcerpt, openGeoidGrid } from '../earth/geoid-grid/index.js';
 import {
@@ -17,6 +18,7 @@ import {
   type GridRequest,
   NO_FILES,
   type RefusedFile,
+  type SeriesRequest,
 } from './campaign-files.js';
 import { CampaignError } from './fault.js';
 import { readCampaign } from './read.js';
@@ -25,7 +27,8 @@ import { readCampaign } from './read.js';
  * @throws {CampaignError} it is there but cannot be read */
 export type OpenFile = <T>(name: string, use: (source: ByteSource) => Promise<T>) => Promise<T | null>;
 
-/** Reads of the files that a campaign names what it needs of them: nodes round its sites, potentials at its markers. What is refused
+/** Reads of the files that a campaign names what it needs of them: nodes round its sites, potentials at its markers, measured
+ *  series. What is refused
  *  is told by the reading of the campaign that follows, at its place there.
  * @param onProgress share of a large file that has been read */
 export async function gatherCampaignFiles(
@@ -35,6 +38,7 @@ export async function gatherCampaignFiles(
 ): Promise<CampaignFiles> {
   const grids = new Map<string, GridRequest>();
   const models = new Map<string, GravityModelRequest>();
+  const series = new Map<string, SeriesRequest>();
   try {
     readCampaign(text, {
       files: {
@@ -46,12 +50,16 @@ export async function gatherCampaignFiles(
           models.set(request.file, request);
           return null;
         },
+        series: (request) => {
+          series.set(keyOfSeries(request), request);
+          return null;
+        },
       },
     });
   } catch (error) {
     if (!(error instanceof CampaignError)) throw error;
   }
-  if (grids.size === 0 && models.size === 0) return NO_FILES;
+  if (grids.size === 0 && models.size === 0 && series.size === 0) return NO_FILES;
   const gridReadings = await readGrids([...grids.values()], open);
   const modelReadings = new Map<string, GravityModelReading | RefusedFile | null>();
   for (const [file, request] of models)
@@ -59,14 +67,25 @@ export async function gatherCampaignFiles(
       file,
       await orRefusal(() => open(file, (source) => readModel(source, request, (share) => onProgress?.(file, share)))),
     );
+  const seriesReadings = new Map<string, FrequencySeries | RefusedFile | null>();
+  for (const [key, request] of series)
+    seriesReadings.set(
+      key,
+      await orRefusal(() =>
+        open(request.file, (source) => readSeries(source, request, (share) => onProgress?.(request.file, share))),
+      ),
+    );
   return {
     grid: (request) => gridReadings.get(keyOfGrid(request)) ?? null,
     gravityModel: ({ file }) => modelReadings.get(file) ?? null,
+    series: (request) => seriesReadings.get(keyOfSeries(request)) ?? null,
   };
 }
 
 const keyOfGrid = ({ file, latitudeDeg, longitudeDeg }: GridRequest): string =>
   JSON.stringify([file, latitudeDeg, longitudeDeg]);
+
+const keyOfSeries = ({ file, columns, tauS }: SeriesRequest): string => JSON.stringify([file, columns, tauS]);
 
 async function orRefusal<T>(read: () => Promise<T>): Promise<T | RefusedFile> {
   try {
@@ -101,6 +120,24 @@ async function readGrids(requests: readonly GridRequest[], open: OpenFile) {
 async function readingAt(grid: GeoidGrid, latitudeDeg: number, longitudeDeg: number): Promise<GridReading> {
   const { surface, tide, heightDatum, warnings } = grid;
   return { nodes: await gridExcerpt(grid, latitudeDeg, longitudeDeg), surface, tide, heightDatum, warnings };
+}
+
+async function readSeries(
+  source: ByteSource,
+  { columns, tauS }: SeriesRequest,
+  onProgress: (share: number) => void,
+): Promise<FrequencySeries> {
+  const read = columns === undefined ? null : readColumnWords(columns);
+  if (read && 'faults' in read) throw new CampaignError(read.faults);
+  const parser = new FrequencySeriesParser({
+    ...(read ? { columns: read.words } : {}),
+    ...(tauS === undefined ? {} : { tauS }),
+  });
+  for await (const piece of piecesOf(source)) {
+    parser.push(piece);
+    onProgress(parser.progress.bytes / source.size);
+  }
+  return parser.finish();
 }
 
 async function readModel(

@@ -13,9 +13,11 @@ import type {
   GravityModelPotential,
   Link,
   LinkFibre,
+  Measured,
   Measurement,
   MeasurementCorrelation,
   Remarks,
+  SeriesUse,
   Site,
   Source,
   Stability,
@@ -289,11 +291,29 @@ const toMethods = (m: ReadOf<typeof methods>): ClassicalMethods => ({
     : null,
 });
 
+/** Stands until the series has been reduced, which is before the campaign leaves the reader (with-series.ts). */
+const NOT_REDUCED: Measured = {
+  value: Number.NaN,
+  u: 0,
+  parts: [],
+  distribution: 'normal',
+  dof: null,
+  tide: null,
+  text: null,
+};
+
+const toSeries = (s: NonNullable<ReadOf<typeof measurement>['series']>): SeriesUse => ({
+  ...remarksOf(s),
+  ...keep(s, 'file', 'columns'),
+  ...(s.tau === undefined ? {} : { tauS: s.tau }),
+});
+
 const toMeasurement = (m: ReadOf<typeof measurement>): Measurement => ({
   ...remarksOf(m),
   id: m.id ?? null,
   link: m.link,
-  y: m.tide === undefined ? m.y : { ...m.y, tide: m.tide },
+  y: m.y === undefined ? NOT_REDUCED : m.tide === undefined ? m.y : { ...m.y, tide: m.tide },
+  ...(m.series === undefined ? {} : { series: toSeries(m.series) }),
   includesSystematic: m.includesSystematic ?? false,
   check: m.use === 'check',
   startMs: m.start ?? null,

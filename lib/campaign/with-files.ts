@@ -7,11 +7,14 @@ import { radToDeg } from '../quantity/radians.js';
 import type { Campaign, Determination, GravityModelCorrelation, Measured, Site } from './campaign.js';
 import type { CampaignFiles, GravityModelRequest } from './campaign-files.js';
 import { CampaignError, type Fault, faultAt, type Warning } from './fault.js';
+import { faultInFile } from './fault-in-file.js';
+import { openSeries, withReducedSeries } from './with-series.js';
 
 /** What a determination says of its datum in the file: to know whether a zero level was chosen or taken by default. */
 export type StatesDatum = (site: number, determination: number) => boolean;
 
-/** Puts in what stands in files beside the campaign: values of geoid grids, potentials of gravity models. Nothing is left open.
+/** Puts in what stands in files beside the campaign: values of geoid grids, potentials of gravity models, means of measured series.
+ *  Nothing is left open.
  * @throws {CampaignError} a file is not at hand or refused, a place lies outside, a grid is of the other surface */
 export function withFiles(
   campaign: Campaign,
@@ -34,12 +37,11 @@ export function withFiles(
       return d.kind === 'gravity-model' ? { ...d, atMarker: potentials.of(s, n) ?? d.atMarker } : d;
     }),
   }));
+  const series = openSeries(campaign, files, faults);
   if (faults.length > 0) throw new CampaignError(faults);
   const { correlations } = potentials;
-  return {
-    campaign: { ...campaign, sites, ...(correlations.length > 0 ? { gravityModels: correlations } : {}) },
-    warnings,
-  };
+  const whole = { ...campaign, sites, ...(correlations.length > 0 ? { gravityModels: correlations } : {}) };
+  return { campaign: withReducedSeries(whole, series, warnings), warnings };
 }
 
 /** The value off the grid, or off the nodes that the campaign keeps. */
@@ -71,7 +73,7 @@ function gridValue(
       return measured;
     }
     if ('faults' in reading) {
-      faults.push(...reading.faults.map((f) => inFile(f, `${path}.grid`, grid.file)));
+      faults.push(...reading.faults.map((f) => faultInFile(f, `${path}.grid`, grid.file)));
       return measured;
     }
     const wanted = isZeta ? 'quasigeoid' : 'geoid';
@@ -120,21 +122,9 @@ function gridValue(
     };
   } catch (error) {
     if (!(error instanceof CampaignError)) throw error;
-    faults.push(...error.faults.map((f) => inFile(f, `${path}.grid`, grid.file)));
+    faults.push(...error.faults.map((f) => faultInFile(f, `${path}.grid`, grid.file)));
     return measured;
   }
-}
-
-/** A fault inside a file, at the place in the campaign that names the file. */
-function inFile(fault: Fault, path: string, file: string): Fault {
-  const where = [fault.path, fault.line === null ? '' : `line ${fault.line}`].filter((s) => s !== '').join(', ');
-  return {
-    ...fault,
-    path,
-    line: null,
-    column: null,
-    found: `in ${file}${where === '' ? '' : ` (${where})`}: ${fault.found}`,
-  };
 }
 
 interface ModelUse {
@@ -212,7 +202,7 @@ class ModelPotentials {
       return;
     }
     if ('faults' in reading) {
-      faults.push(...reading.faults.map((f) => inFile(f, first, file)));
+      faults.push(...reading.faults.map((f) => faultInFile(f, first, file)));
       return;
     }
     warnings.push(...reading.warnings.map((w) => ({ ...w, path: first })));

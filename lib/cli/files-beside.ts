@@ -8,7 +8,7 @@ import { withFileSource } from './file-source.js';
  *  by standard input. */
 export async function filesBeside(campaignName: string, text: string): Promise<CampaignFiles> {
   // most campaigns name none, and are then read once only
-  if (!/"(grid|model)"/.test(text)) return NO_FILES;
+  if (!/"(grid|model|series)"/.test(text)) return NO_FILES;
   const folder = campaignName === '-' ? '.' : path.dirname(campaignName);
   const progress = progressLine();
   try {

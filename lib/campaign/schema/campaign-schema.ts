@@ -18,6 +18,7 @@ import { determination } from './determinations.js';
 import { EPOCH, FRAME } from './epoch-and-frame.js';
 import { clock, interval, link } from './instruments.js';
 import { latitude, longitude, oceanLoading, pole, position } from './places.js';
+import { series } from './series.js';
 
 /** Datums that are built in, exact, and cannot be defined again. */
 export const BUILT_IN_DATUMS = datumReference.descriptor.builtIn;
@@ -149,10 +150,15 @@ export const measurement = object(
   {
     id: optional(id('measurements'), 'Id', 'Name by which correlations refer to the measurement.'),
     link: required(reference('links'), 'Link', 'Link that was measured.'),
-    y: required(
+    y: optional(
       quantity('fraction', { tide: true, ...SMALL_FRACTION }),
       'Offset y',
       '[ν_B/ν_B,rec]/[ν_A/ν_A,rec] − 1, every correction applied except gravity’s. Its u is statistics alone.',
+    ),
+    series: optional(
+      series,
+      'Series',
+      'In place of y: frequency data, a file beside the campaign: its name, or {"file", "columns", "tau"}. y is its mean over the time in which clocks and link are valid, the tide taken off each sample; u comes from its noise.',
     ),
     tide: optional(oneOf('mean', 'zero', 'free'), 'Tide system', 'Permanent-tide system of y. Default: mean.'),
     includesSystematic: optional(
@@ -164,7 +170,15 @@ export const measurement = object(
     start: optional(instant(), 'Start', 'Beginning of the measurement, ISO 8601 in UTC or MJD.'),
     end: optional(instant(), 'End', 'End of the measurement, ISO 8601 in UTC or MJD.'),
   },
-  { ordered: [['start', 'end']] },
+  {
+    alternatives: [['y'], ['series']],
+    exclusive: [
+      ['y', 'series'],
+      ['series', 'tide'],
+      ['series', 'includesSystematic'],
+    ],
+    ordered: [['start', 'end']],
+  },
 );
 
 export const correlation = object('correlation', 'Correlation of the statistical parts of two measurements.', {

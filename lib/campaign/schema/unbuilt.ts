@@ -2,7 +2,7 @@
  *  that is read and then left out of the answer would be worse. An entry goes when its part lands; what reads the key may
  *  already stand in the schema. Written `object.key`, `quantity.key` or
  *  `determination=kind`. */
-const unbuilt: ReadonlySet<string> = new Set(['measurement.series']);
+const unbuilt: ReadonlySet<string> = new Set();
 
 /** Whether this version computes what a key says. @param name of the object, or the key under which a quantity stands */
 export const isBuilt = (name: string, key: string): boolean => !unbuilt.has(`${name}.${key}`);

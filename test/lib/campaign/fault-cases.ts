@@ -399,7 +399,14 @@ export const CASES: readonly Case[] = [
     expected: 'a list of 2',
   },
   // places and times
-  { code: 'out-of-range', path: 'sites.a.lat', at: '95', change: site('"lat": 95'), expected: '90' },
+  {
+    code: 'out-of-range',
+    path: 'sites.a.lat',
+    at: '139.76',
+    change: site('"lat": 139.76'),
+    expected: 'lat and lon look swapped',
+  },
+  { code: 'out-of-range', path: 'sites.a.lat', at: '195', change: site('"lat": 195'), expected: '90°' },
   {
     code: 'out-of-range',
     path: 'sites.a.lon',
@@ -750,10 +757,35 @@ export const CASES: readonly Case[] = [
     change: { measurements: PARTS.measurements.replace('"2.1(2)e-14"', '"2.1e-14", "includesSystematic": true') },
   },
   {
-    code: 'not-built',
+    code: 'exclusive-keys',
     path: 'measurements.0.series',
     at: '"series"',
+    change: { measurements: PARTS.measurements.replace('"y": "2.1(2)e-14"', '"y": "2.1(2)e-14", "series": "run.csv"') },
+  },
+  {
+    code: 'file-not-at-hand',
+    path: 'measurements.0.series',
+    at: '"run.csv"',
     change: { measurements: PARTS.measurements.replace('"y": "2.1(2)e-14"', '"series": "run.csv"') },
+  },
+  {
+    code: 'exclusive-keys',
+    path: 'measurements.0.includesSystematic',
+    at: '"includesSystematic"',
+    change: {
+      measurements: PARTS.measurements.replace('"y": "2.1(2)e-14"', '"series": "run.csv", "includesSystematic": true'),
+    },
+  },
+  {
+    code: 'unknown-name',
+    path: 'measurements.0.series.columns',
+    at: '"mjd z"',
+    change: {
+      measurements: PARTS.measurements.replace(
+        '"y": "2.1(2)e-14"',
+        '"series": { "file": "run.csv", "columns": "mjd z" }',
+      ),
+    },
   },
   {
     code: 'out-of-range',

@@ -59,7 +59,7 @@ describe('campaignJsonSchema', () => {
     expect(seen.length).toBeGreaterThan(45);
   });
 
-  it('knows a title and a description of every key, and no key that is not built', () => {
+  it('knows a title and a description of every key', () => {
     let keys = 0;
     const visit = (node: unknown): void => {
       if (typeof node !== 'object' || node === null) return;
@@ -69,7 +69,6 @@ describe('campaignJsonSchema', () => {
         keys++;
         expect(property['title'], key).toMatch(/\S/);
         expect(property['description'], key).toMatch(/\S/);
-        expect(['series']).not.toContain(key);
       }
       for (const inner of Object.values(node)) visit(inner);
     };
@@ -104,9 +103,7 @@ describe('campaignJsonSchema', () => {
 });
 
 describe('keys that are not built', () => {
-  it.each(unbuiltEntries())('%s stands for something that can be refused', (entry) => {
-    expect(entry).toMatch(/^[\w-]+[.=][\w-]+$/);
-    const [owner, key] = entry.split(/[.=]/) as [string, string];
+  it('stand each for something that can be refused', () => {
     const names = new Set<string>();
     const visit = (d: Descriptor): void => {
       if (d.type === 'list') visit(d.item);
@@ -122,9 +119,12 @@ describe('keys that are not built', () => {
       }
     };
     visit(campaignSchema);
-    // a name that nothing in the schema has would let the key pass
-    expect(names).toContain(owner);
-    expect(key).not.toBe('');
+    expect(names).toContain('measurement');
+    for (const entry of unbuiltEntries()) {
+      expect(entry).toMatch(/^[\w-]+[.=][\w-]+$/);
+      // a name that nothing in the schema has would let the key pass
+      expect(names).toContain(entry.split(/[.=]/)[0]);
+    }
   });
 });
 
