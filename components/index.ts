@@ -5,6 +5,7 @@ import './floors/plumb-floors.define.js';
 import './links/plumb-links.define.js';
 import './network/plumb-network.define.js';
 import './pair/plumb-pair.define.js';
+import './section/plumb-section.define.js';
 
 export { version } from '../lib/constants/version.js';
 export { PlumbCampaign } from './campaign/plumb-campaign.js';
@@ -14,5 +15,7 @@ export { PlumbLinks } from './links/plumb-links.js';
 export { PlumbNetwork } from './network/plumb-network.js';
 export { PlumbPair } from './pair/plumb-pair.js';
 export { PlumbElement } from './plumb-element.js';
+export { PlumbSection } from './section/plumb-section.js';
 export type { PlumbChange } from './shared/article-element.js';
 export type { AnsweredCampaign, CampaignState } from './state/campaign-context.js';
+export type { PlumbSelect } from './state/in-hand.js';

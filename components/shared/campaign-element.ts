@@ -1,4 +1,4 @@
-import { html, nothing, type TemplateResult } from 'lit';
+import { html, nothing, type PropertyDeclarations, type TemplateResult } from 'lit';
 import { CampaignError, type Fault } from '../../lib/campaign/fault.js';
 import { PlumbElement } from '../plumb-element.js';
 import { type AnsweredCampaign, CampaignConsumer } from '../state/campaign-context.js';
@@ -8,7 +8,7 @@ import { sentenceCase } from './rich-text.js';
 
 /** An element that shows one side of the campaign round it: its states, the link in hand, who computed it and when. */
 export abstract class CampaignElement extends PlumbElement {
-  static override properties = { link: { type: String } };
+  static override properties: PropertyDeclarations = { link: { type: String } };
 
   /** Id of the link in hand; without it the one that a reader has taken in hand in the campaign round the element. */
   declare link: string | null;

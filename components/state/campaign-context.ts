@@ -2,7 +2,7 @@ import type { ReactiveController, ReactiveControllerHost } from 'lit';
 import type { Prediction } from '../../lib/answers/prediction.js';
 import type { Campaign } from '../../lib/campaign/campaign.js';
 import type { Fault, Warning } from '../../lib/campaign/fault.js';
-import './in-hand.js';
+import type {} from './in-hand.js';
 
 /** A campaign with what follows from it. */
 export interface AnsweredCampaign {

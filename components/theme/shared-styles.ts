@@ -62,6 +62,7 @@ export const sharedStyles = css`
     color: var(--p-ink-2);
     margin: var(--p-space-3) 0 0;
     max-width: 62em;
+    text-wrap: pretty;
   }
   .say {
     font-size: var(--p-size-5);
@@ -301,6 +302,10 @@ export const sharedStyles = css`
   }
 
   @container plumb (max-width: 655px) {
+    .say {
+      font-size: 17px;
+      margin-bottom: var(--p-space-4);
+    }
     .flt dl {
       grid-template-columns: 64px minmax(0, 1fr);
     }

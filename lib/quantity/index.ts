@@ -28,4 +28,6 @@ export { type QuantityProblem, type Read, readExact, readStandardUncertainty } f
 export { parseQuantity, type Quantity } from './quantity.js';
 export { QuantityError, type QuantityFaultCode } from './quantity-error.js';
 export { degToRad, type Radians, radToDeg } from './radians.js';
+export { offsetSizeText, sizeText } from './size.js';
+export { statedDigits } from './stated-digits.js';
 export { readUnit, type Unit } from './units.js';
