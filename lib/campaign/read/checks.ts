@@ -5,7 +5,7 @@ import type { JsonNode } from '../json-tree.js';
 import type { campaignSchema, correlation, measurement, site, transition } from '../schema/campaign-schema.js';
 import type { ReadOf } from '../schema/descriptor.js';
 import type { clock, link } from '../schema/instruments.js';
-import { checkOceanLoading, checkPole, checkPosition, checkRoute } from './place-checks.js';
+import { checkOceanLoading, checkPole, checkPosition, checkRoute, explainSwappedAxes } from './place-checks.js';
 import type { Origin, Reading } from './reading.js';
 import { checkReferences, checkSources } from './references.js';
 
@@ -18,6 +18,7 @@ export function checkCampaign(file: Readable<ReadOf<typeof campaignSchema>>, rea
   checkSources(file.sources ?? [], reading.uses);
   for (const s of file.sites ?? []) {
     checkHeights(s, reading);
+    explainSwappedAxes(s, reading);
     checkPosition(s, reading);
     checkOceanLoading(s, reading);
     checkLines(s, reading);

@@ -12,6 +12,16 @@ type Readable<T> = Partial<T>;
 const memberOf = (node: JsonNode, key: string): JsonNode =>
   (node.type === 'object' ? node.members.get(key)?.value : undefined) ?? node;
 
+/** A latitude beyond 90° beside a longitude that could be one: only the swap makes sense. */
+export function explainSwappedAxes(s: Readable<ReadOf<typeof site>>, reading: Reading): void {
+  const { node, context } = reading.originOf(s);
+  const lat = memberOf(node, 'lat');
+  const lon = memberOf(node, 'lon');
+  if (s.lat !== undefined || lat.type !== 'number' || lon.type !== 'number') return;
+  if (Math.abs(lat.value) > 90 && Math.abs(lat.value) <= 180 && Math.abs(lon.value) <= 90)
+    reading.explain(`${context.path}.lat`, 'lat and lon look swapped');
+}
+
 /** A position has to name a place. What could not be read is refused already. */
 export function checkPosition(s: Readable<ReadOf<typeof site>>, reading: Reading): void {
   if (s.position?.crs === undefined) return;

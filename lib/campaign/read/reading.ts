@@ -67,6 +67,13 @@ export class Reading {
     if (this.placed.length >= MAX_FAULTS) throw new TooManyFaults();
   }
 
+  /** Adds words to what the fault of a path expects: a likely reason that only shows beside other keys. */
+  explain(path: string, words: string): void {
+    const i = this.placed.findIndex((p) => p.fault.path === path);
+    const at = this.placed[i];
+    if (at) this.placed[i] = { ...at, fault: { ...at.fault, expected: `${at.fault.expected}; ${words}` } };
+  }
+
   /** Index in the file of a character inside a text value. */
   placeInside(node: JsonNode, position: number): number {
     if (this.text === null || node.start < 0 || node.type !== 'string') return node.start;
