@@ -48,6 +48,8 @@ export interface LinkBreakEven {
   readonly best: 'clocks' | 'levelling' | 'gnss' | null;
   /** distance beyond which clocks as good as these are better, m; 0: at any distance; null: at none, or nothing to compare */
   readonly beyond: { readonly levelling: number | null; readonly gnss: number | null };
+  /** fraction of frequency per metre of length equivalent, ḡ/c², m⁻¹ */
+  readonly yPerM: number;
   /** GNSS and (quasi)geoid over distance for sites such as these two; null where one has no such determination */
   readonly gnssModel: GnssOverDistance | null;
 }
@@ -87,9 +89,7 @@ export function breakEvenOf(solved: SolvedCampaign, options: BreakEvenOptions = 
   const { window } = campaign;
   const time = options.timeS ?? (window ? (window.endMs - window.startMs) / 1000 : null);
   if (time === null)
-    throw new CampaignError([
-      faultAt('missing', 'window', 'no window', '"window", or the time the clocks are compared for (--time)'),
-    ]);
+    throw new CampaignError([faultAt('missing', 'window', 'no window', '"window", or the time of the comparison')]);
   const levelling: LevellingOverDistance | null =
     options.levelling ??
     (campaign.methods?.levelling ? { ...campaign.methods.levelling, origin: 'methods' } : levellingInFile(campaign));
@@ -145,6 +145,7 @@ function linkBreakEven(
       gnss:
         clocks === null || gnssModel === null ? null : smallestDistanceM((d) => gnssUncertaintyM(gnssModel, d), clocks),
     },
+    yPerM: budget.gravityMs2 / C2,
     gnssModel,
   };
 }
