@@ -71,6 +71,7 @@ export function evaluationOf(solved: SolvedCampaign): Evaluation {
     : null;
   const chi2 = white ? white.reduce((s, row) => s + row[0]! * row[0]!, 0) : null;
   return {
+    effectM,
     links,
     chi2,
     dof,
@@ -87,7 +88,9 @@ function linkEvaluation(solved: SolvedCampaign, comparison: Comparison, effectM:
   const residual = residualEstimate(solved, comparison);
   const z = residual ? zOf(residual) : null;
   const { dW, g, dHNormal } = inferredDependents(solved, offset);
-  const smallestDetectableM = residual ? (DETECTION_FACTOR * residual.u * C2) / g.value : null;
+  const ratio = transitionOffset(model, offset.link);
+  const perLength = C2 / g.value;
+  const smallestDetectableM = residual ? DETECTION_FACTOR * residual.u * perLength : null;
   let verdict: Verdict | null = null;
   if (z !== null && Math.abs(z) > 2) verdict = 'differ';
   else if (residual && effectM !== null && z !== null)
@@ -101,11 +104,14 @@ function linkEvaluation(solved: SolvedCampaign, comparison: Comparison, effectM:
     measurement: offset.measurement.id ?? offset.index,
     measured: { value: offset.yMean, u: measuredStandardUncertainty(solved, offset) },
     predicted: predicted && estimateOf(model.covariance, predicted),
+    ratioOffset: ratio.gradient.indices.length === 0 ? null : estimateOf(model.covariance, ratio),
     residual,
+    residualLength: residual && { value: residual.value * perLength, u: residual.u * perLength },
     z,
     p: z === null ? null : 2 * normalCdf(-Math.abs(z)),
     verdict,
     smallestDetectableM,
+    effectOffset: effectM === null ? null : effectM / perLength,
     suspects: verdict === 'differ' ? suspectsOf(solved, offset.index) : [],
     inferred: {
       dW: withStatistics(dW, C2),

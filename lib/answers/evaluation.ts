@@ -13,8 +13,12 @@ export interface LinkEvaluation {
   readonly measured: Estimate;
   /** gravity's y plus offset(to) − offset(from); null without a level */
   readonly predicted: Estimate | null;
+  /** offset(to) − offset(from), the part of `predicted` that unlike transitions add; null between equal ones */
+  readonly ratioOffset: Estimate | null;
   /** measured − predicted */
   readonly residual: Estimate | null;
+  /** the same as length equivalent, m */
+  readonly residualLength: Estimate | null;
   readonly z: number | null;
   /** two-sided, normal */
   readonly p: number | null;
@@ -22,6 +26,8 @@ export interface LinkEvaluation {
   readonly verdict: Verdict | null;
   /** smallest discrepancy the comparison shows at test size 0.05 and power 0.8, as length equivalent, m */
   readonly smallestDetectableM: number | null;
+  /** the discrepancy asked about, as a fraction of frequency; null where none is stated */
+  readonly effectOffset: number | null;
   /** single mistakes held against the residual, best first; empty unless the verdict is `differ` */
   readonly suspects: readonly Suspect[];
   /** what the clocks alone say, frequency offsets taken off, campaign's tide system */
@@ -34,6 +40,8 @@ export interface LinkEvaluation {
 
 /** The answer of `evaluate`. */
 export interface Evaluation {
+  /** the discrepancy asked about, as length equivalent, m: as stated, else ten times the target; null without either */
+  readonly effectM: number | null;
   readonly links: readonly LinkEvaluation[];
   /** rᵀ·V⁻¹·r over all comparable measurements */
   readonly chi2: number | null;
