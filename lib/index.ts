@@ -1,4 +1,5 @@
 /** The public door of Plumbtick's library. */
+export { type BreakEven, type BreakEvenOptions, breakEven, type LinkBreakEven } from './answers/break-even.js';
 export { type FloorsAnswer, type FloorsInput, floors } from './answers/floors.js';
 export { type GridAnswer, type GridQuestion, grid } from './answers/grid.js';
 export {
@@ -10,13 +11,22 @@ export {
 } from './answers/monte-carlo.js';
 export { type PairAnswer, type PairInput, pair } from './answers/pair.js';
 export { type LinkPath, type PathAnswer, path } from './answers/path.js';
+export { type BridgedPlan, type LinkPlan, type Plan, type PlanPart, type PlanPoint, plan } from './answers/plan.js';
 export { predict } from './answers/predict.js';
 export type * from './answers/prediction.js';
 export { analyseSeries, type SeriesAnswer, type SeriesDeviation, type SeriesQuestion } from './answers/series.js';
+export { STARTING_VALUES } from './answers/starting-values.js';
 export { type LinkTide, TIDE_STEP_S, type TideAnswer, type TideLeft, tide } from './answers/tide.js';
 export { tideCautions } from './answers/tide-cautions.js';
+export {
+  type TransportedClocks,
+  type TransportedLink,
+  type TransportedResult,
+  transportedClocks,
+} from './answers/transported-clock.js';
 export type * from './campaign/campaign.js';
 export { CampaignError, type Fault, type Warning } from './campaign/fault.js';
+export { type ImportOptions, importLinks, importSites } from './campaign/import/import-table.js';
 export { type ReadCampaign, readCampaign, readCampaignValue } from './campaign/read.js';
 export { campaignJsonSchema, type JsonSchema } from './campaign/schema/index.js';
 export {
