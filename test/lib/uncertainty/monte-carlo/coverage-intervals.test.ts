@@ -26,6 +26,7 @@ describe('coverage intervals from sorted trials', () => {
   it('takes the ranks of JCGM 101:2008, 7.7.2: M = 1e6, p = 0.95 gives y_(25 000) and y_(975 000)', () => {
     expect(symmetricRanks(1_000_000, 0.95)).toEqual({ low: 24_999, high: 974_999, span: 950_000 });
     // odd M − q: r = (M − q + 1)/2, counted from 1; q = int(pM + ½) where pM is not whole
+    expect(symmetricRanks(1030, 0.95)).toEqual({ low: 25, high: 1004, span: 979 });
     expect(symmetricRanks(1001, 0.95)).toEqual({ low: 24, high: 975, span: 951 });
     expect(symmetricRanks(1010, 0.95)).toEqual({ low: 24, high: 984, span: 960 });
   });

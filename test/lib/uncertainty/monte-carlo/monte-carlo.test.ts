@@ -12,6 +12,7 @@ import {
   type TrialModel,
 } from '../../../../lib/uncertainty/monte-carlo/index.js';
 import { Sampler } from '../../../../lib/uncertainty/monte-carlo/sampler.js';
+import { Xoshiro128 } from '../../../../lib/uncertainty/random.js';
 import { expectRelative, expectWithin } from '../expect-relative.js';
 
 const input = (
@@ -57,6 +58,24 @@ function sampleCorrelation(inputs: TrialInput[], correlations: TrialCorrelation[
   }
   return ab / Math.sqrt(aa * bb);
 }
+
+describe('streams', () => {
+  it('give each input, by the order of names, its own 2⁶⁴ draws of the seeded generator', () => {
+    const inputs = ['b', 'c', 'a'].map((name) => input(name, 1, 'uniform'));
+    const sampler = new Sampler(inputs, [], 77);
+    sampler.draw(1000);
+    sampler.draw(500);
+    const generator = Xoshiro128.fromSeed(77);
+    for (const i of [2, 0, 1]) {
+      const expected = new Float64Array(1500);
+      generator.clone().fillUniform(expected, 1500);
+      for (let t = 0; t < 500; t++) {
+        expectWithin(sampler.deviations[i]![t]!, 2 * Math.sqrt(3) * (expected[1000 + t]! - 0.5), 1e-15);
+      }
+      generator.jump();
+    }
+  });
+});
 
 describe('correlated draws', () => {
   // standard error of a correlation of 4e5 normal pairs: (1 − ρ²)/√4e5 ≤ 1.6e-3·(1 − ρ²); heavier shapes a little more
