@@ -3,8 +3,6 @@ import { CampaignError, type Fault, faultAt } from '../../lib/campaign/fault.js'
 import { withPlaces } from '../../lib/campaign/locate.js';
 import { readCampaign } from '../../lib/campaign/read.js';
 import { PlumbElement } from '../plumb-element.js';
-import { computedBy } from '../shared/provenance.js';
-import { sentenceCase } from '../shared/rich-text.js';
 import { warningList } from '../shared/warnings.js';
 import { predictionFor } from '../state/answers.js';
 import { type AnsweredCampaign, CampaignProvider, type CampaignState } from '../state/campaign-context.js';
@@ -215,7 +213,6 @@ export class PlumbCampaign extends PlumbElement {
     return html`<slot></slot>
       <div class="foot">
         ${this.#warnings(state)}
-        <p class="note">${sentenceCase(computedBy())}.</p>
       </div>`;
   }
 }

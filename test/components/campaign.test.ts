@@ -52,36 +52,20 @@ describe('plumb-campaign with plumb-links', () => {
     await setViewport({ width: 800, height: 600 });
   });
 
-  it('loads a file and shows every link on three scales, measured beside predicted', async () => {
+  it('loads a file for the elements inside, and shows every link on three scales', async () => {
     const { element, links } = await loaded(THREE);
     expect(element.state.status).to.equal('ready');
-    // three-sites.predict.json: dW 8428.80115(26064), y 9.3783061(29)e-14, dH 858.53931(2655), dHNormal 858.60242(2655)
-    expect(cells(links)[0]).to.deep.equal([
-      'hrh1 to r1, fibre, 70 km',
+    // three-sites.predict.json: dW 8428.80115(26064), y 9.3783061(29)e-14, dH 858.53931(2655)
+    expect(cells(links)[0]!.slice(0, 4)).to.deep.equal([
+      'hr h1 to r1, fibre, 70 km',
       '858.539(27)',
       '8428.80(26)',
       '93783.1(2.9)',
-      '+858.602(27)',
-      '93784.7(3.3)',
     ]);
-    expect(cells(links)[2]!.at(-1)).to.equal('none');
-    const heads = [...links.shadowRoot!.querySelectorAll('thead th')].map((th) =>
-      th.textContent?.replace(/\s+/g, ' ').trim(),
-    );
-    expect(heads).to.deep.equal([
-      'link',
-      'length / m',
-      'ΔW / m²/s²',
-      'y / 1e-18',
-      'normal height / m',
-      'measured y / 1e-18',
-    ]);
-    expect(words(links, '.say')).to.match(
-      /^The least certain link, rp, is predicted to 44 mm\. What limits it most is datum north, W0, with 48 %/,
-    );
     expect(words(links, '.note')).to.contain('y > 0 when the second clock of a link (to) runs fast');
     expect(words(links, '.note')).to.contain('Over distance it is not a height difference');
-    expect(words(element, '.foot')).to.match(/Computed by Plumbtick .+ on \d{4}-\d\d-\d\d\./);
+    expect(words(links, '.by')).to.match(/^Computed by Plumbtick .+ on \d{4}-\d\d-\d\d\.$/);
+    expect(words(element, '.foot')).to.contain('Caution: sites.ridge');
   });
 
   it('takes a campaign from the page itself, without a measured column where nothing was measured', async () => {
