@@ -8,6 +8,7 @@ export default defineConfig({
   test: {
     include: ['test/{lib,published,cli,pages}/**/*.test.ts'],
     testTimeout: 60_000,
+    hookTimeout: 120_000,
     coverage: { provider: 'v8', include: ['lib/**/*.ts'] },
   },
 });
