@@ -8,6 +8,7 @@ import './links/plumb-links.define.js';
 import './network/plumb-network.define.js';
 import './pair/plumb-pair.define.js';
 import './section/plumb-section.define.js';
+import './series/plumb-series.define.js';
 
 export { version } from '../lib/constants/version.js';
 export { PlumbAveraging } from './averaging/plumb-averaging.js';
@@ -20,6 +21,7 @@ export { PlumbNetwork } from './network/plumb-network.js';
 export { PlumbPair } from './pair/plumb-pair.js';
 export { PlumbElement } from './plumb-element.js';
 export { PlumbSection } from './section/plumb-section.js';
+export { PlumbSeries } from './series/plumb-series.js';
 export type { PlumbChange } from './shared/article-element.js';
 export type { AnsweredCampaign, CampaignState } from './state/campaign-context.js';
 export type { PlumbSelect } from './state/in-hand.js';

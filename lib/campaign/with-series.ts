@@ -1,4 +1,4 @@
-import { type Reduction, reduceSeries } from '../clocks/reduction.js';
+import { type Reduction, type ReductionOptions, reduceSeries } from '../clocks/reduction.js';
 import { type FrequencySeries, instantOf } from '../clocks/series/frequency-series.js';
 import { SPEED_OF_LIGHT_SQUARED_M2_PER_S2 } from '../constants/defining-constants.js';
 import { TIDE_FIRST_MS, TIDE_LAST_MS } from '../earth/earth-tide/sun-and-moon.js';
@@ -86,10 +86,7 @@ function reduced(
   if (dated) checkTideReaches(campaign, data, refuse);
   let reduction: Reduction;
   try {
-    reduction = reduceSeries(data, {
-      ...(validity.length > 0 ? { validity } : {}),
-      ...(dated ? { correction: tideOfLink(campaign, measurement) } : {}),
-    });
+    reduction = reduceSeries(data, reductionOptions(campaign, measurement, data));
   } catch (error) {
     if (!(error instanceof RangeError)) throw error;
     return refuse(
@@ -129,6 +126,19 @@ function reduced(
         tideMean: reduction.correctionMean,
       },
     },
+  };
+}
+
+/** What goes into the reduction of a measurement's series: when its parts are valid, and the tide to take off. */
+export function reductionOptions(
+  campaign: Campaign,
+  measurement: Measurement,
+  data: FrequencySeries,
+): Pick<ReductionOptions, 'validity' | 'correction'> {
+  const validity = validityOf(campaign, measurement);
+  return {
+    ...(validity.length > 0 ? { validity } : {}),
+    ...(data.originMs === null ? {} : { correction: tideOfLink(campaign, measurement) }),
   };
 }
 

@@ -77,6 +77,19 @@ export function reduceSeries(series: FrequencySeries, options: ReductionOptions 
   };
 }
 
+/** The samples that go into the mean, freed of the correction: those wholly inside the validity of all partners.
+ * @throws {RangeError} as `reduceSeries` does */
+export function reducedSamples(series: FrequencySeries, options: Omit<ReductionOptions, 'drift'>): FrequencySeries {
+  const { validity, correction } = options;
+  if (series.originMs === null && (validity !== undefined || correction !== undefined))
+    throw new RangeError('the series has no dates: validity and corrections cannot be matched to it');
+  const selected = validity === undefined ? everything(series) : within(series, intersectionOfIntervals(validity));
+  if (selected.y.length === 0) throw new RangeError('no sample lies within the validity of all partners');
+  if (correction !== undefined) takeOff(selected, series.originMs!, correction);
+  const { y, startS, lengthS, runs } = selected;
+  return { ...series, y, startS, lengthS, runs, u: null };
+}
+
 interface Selected {
   y: Float64Array;
   startS: Float64Array;
