@@ -1,6 +1,7 @@
 /** All elements of Plumbtick, registered; for one alone take its own `….define.js`. */
 import './averaging/plumb-averaging.define.js';
 import './break-even/plumb-break-even.define.js';
+import './budget/plumb-budget.define.js';
 import './campaign/plumb-campaign.define.js';
 import './desk/plumb-desk.define.js';
 import './floors/plumb-floors.define.js';
@@ -13,6 +14,7 @@ import './series/plumb-series.define.js';
 export { version } from '../lib/constants/version.js';
 export { PlumbAveraging } from './averaging/plumb-averaging.js';
 export { PlumbBreakEven } from './break-even/plumb-break-even.js';
+export { PlumbBudget, type PlumbWhatIf } from './budget/plumb-budget.js';
 export { PlumbCampaign } from './campaign/plumb-campaign.js';
 export { PlumbDesk } from './desk/plumb-desk.js';
 export { PlumbFloors } from './floors/plumb-floors.js';

@@ -15,6 +15,10 @@ export const inlineWorker = {
         minify: true,
         format: 'iife',
         target: 'es2022',
+        charset: 'ascii', // the text goes through the page's own encoding
+        define: b.initialOptions.define,
+        external: b.initialOptions.external,
+        legalComments: 'none', // the licences stand once, in the bundle that carries it
         write: false,
       });
       return { contents: r.outputFiles[0].text, loader: 'text', watchFiles: [a.path] };
