@@ -191,6 +191,54 @@ describe('calendar', () => {
   });
 });
 
+describe('flywheel', () => {
+  const flywheel = (stability: Loose, more: Loose = {}) => ({ flywheel: { stability, cycle: '1 d', ...more } });
+
+  it('one without noise lets every part average over its own time', () => {
+    // A runs 0.8 of 20 d beside its flywheel; the link compares while B runs, 0.5
+    const { bridged, window } = linkOf({ a: flywheel({}) });
+    const variance = 9e-32 / (16 * DAY) + 16e-32 / (10 * DAY) + 2.5e-37 + 1e-30 / (10 * DAY) ** 2;
+    expectWithin(bridged!.window!.uStat, Math.sqrt(variance), 1e-12 * bridged!.window!.uStat);
+    expect(bridged!.window!.uDeadTime).toBe(0);
+    expect(bridged!.clocks).toEqual(['ka']);
+    expect(bridged!.window!.uStat).toBeLessThan(window!.uStat);
+    expect(bridged!.timeToTarget!).toBeLessThan(linkOf().timeToTarget!);
+    expect(bridged!.targetMet!.inWindow).toBe(true);
+    const sum = Object.values(bridged!.window!.shares!).reduce((a, b) => a + b, 0);
+    expectWithin(sum, 1, 1e-12);
+  });
+
+  it('both clocks bridged: the link counts alone', () => {
+    const { bridged } = linkOf({ a: flywheel({}), b: flywheel({}), link: { uptime: 0.25 } });
+    const variance = 9e-32 / (16 * DAY) + 16e-32 / (10 * DAY) + 2.5e-37 + 1e-30 / (5 * DAY) ** 2;
+    expectWithin(bridged!.window!.uStat, Math.sqrt(variance), 1e-12 * bridged!.window!.uStat);
+  });
+
+  it('leaves the plan of the common time as it is, and warns where it loses', () => {
+    const a = flywheel({ flicker: 2e-15 });
+    const { bridged, curve, timeToTarget } = linkOf({ a });
+    expect(curve).toEqual(linkOf().curve);
+    expect(timeToTarget).toBe(linkOf().timeToTarget);
+    expect(bridged!.window!.limit).toMatchObject({ kind: 'dead-time', of: 'ka' });
+    expect(plan(two({ a })).warnings.map((w) => w.code)).toContain('flywheel-loses');
+    expect(linkOf().bridged).toBeNull();
+  });
+
+  it('with stated intervals: no curve before there is data of all, and none beyond the window', () => {
+    const days = (d: number) => `2027-06-${String(d).padStart(2, '0')}T00:00:00Z`;
+    const a = {
+      uptime: undefined,
+      available: [{ start: days(4), end: days(6) }],
+      flywheel: { stability: { flicker: 1e-18 } },
+    };
+    const { bridged } = linkOf({ a });
+    // data of A from 3 d on; 5e5 s and 1e6 s lie between that and the window's 20 d
+    expect(bridged!.curve.map(({ T }) => T)).toEqual([5e5, 1e6]);
+    expectWithin(bridged!.window!.T, 20 * DAY, 0);
+    expect(bridged!.timeToTarget!).toBeGreaterThan(3 * DAY);
+  });
+});
+
 test('fibre noise enters plan and planned adjustment alike as phase noise', () => {
   // τ = 1.468·2e5/c, a = 1/3: σ_y(1 s) = τ·√(f_h·h·L)/ν
   const phase = ((1.468 * 2e5) / 299_792_458) * (Math.sqrt(20 * 10 * 200) / 194.4e12);

@@ -105,6 +105,9 @@ describe('a run at the beginning of every cycle', () => {
     const comb = combOver(86_400, 86_400, 0.25);
     const drift = only({ driftPerDay: 1e-16 });
     expectWithin(Math.sqrt(deadTimeVariance(use, comb, drift)), 3.75e-17, 1e-28);
+    // the same where the run lies in the middle of the second half: mean epochs 1/4 of a day apart
+    const later = { kind: 'intervals', spans: spans([54_000, 75_600]) } as const;
+    expectWithin(Math.sqrt(deadTimeVariance(use, later, drift)), 2.5e-17, 1e-28);
     const intervals = { kind: 'intervals', spans: spansOfComb(comb) } as const;
     expectWithin(Math.sqrt(deadTimeVariance(use, intervals, drift)), 3.75e-17, 1e-28);
   });
@@ -117,6 +120,9 @@ describe('deadTimeVariance', () => {
     const full = deadTimeVariance({ spans: LINK, thinned: 1 }, calibration, noise);
     const half = deadTimeVariance({ spans: LINK, thinned: 0.5 }, calibration, noise);
     expectWithin(half - full, 1e-26 / 167_800, 1e-9 * full);
+    const comb = combOver(864_000, 86_400, 0.5);
+    const whole = (thinned: number) => deadTimeVariance({ spans: spans([0, 864_000]), thinned }, comb, noise);
+    expectWithin(whole(0.25) - whole(1), (3 * 1e-26) / 864_000, 1e-9 * whole(1));
   });
 
   it('refuses what has no mean', () => {
