@@ -173,7 +173,7 @@ function strip(
   top: number,
 ): SVGTemplateResult {
   return svg`<text x=${box.left} y=${top - 5} class="l2">what limits ${main.plan.id}</text>
-    ${main.limits.map(({ fromS, toS, part }) => {
+    ${main.limits().map(({ fromS, toS, part }) => {
       const [a, b] = [x.at(fromS / DAY_S), x.at(toS / DAY_S)];
       const words = partText(part, campaign);
       const fixed = part.kind === 'systematic' || part.kind === 'ratio' || part.kind === 'flicker';

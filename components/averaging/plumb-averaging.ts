@@ -116,7 +116,8 @@ function firstToShow({ links }: AveragingFigure): AveragingLink {
 }
 
 function notes(main: AveragingLink, campaign: Campaign): TemplateResult {
-  const { plan, limits } = main;
+  const { plan } = main;
+  const limits = main.limits();
   const stretches = limits.map(({ toS, part }, i) =>
     i === limits.length - 1 ? partText(part, campaign) : `${partText(part, campaign)} up to ${wallText(toS)}`,
   );

@@ -1,4 +1,5 @@
 import type { Campaign } from '../campaign/campaign.js';
+import { statisticalVariance } from '../clocks/averaging.js';
 import { SPEED_OF_LIGHT_SQUARED_M2_PER_S2 } from '../constants/defining-constants.js';
 import { type LinkPlan, type Plan, type PlanPart, planOf } from './plan.js';
 import { type LinkBudget, linkBudget, planPoint } from './plan-budget.js';
@@ -23,7 +24,8 @@ export interface LimitStretch {
 export interface AveragingLink {
   readonly plan: LinkPlan;
   readonly points: readonly AveragingPoint[];
-  readonly limits: readonly LimitStretch[];
+  /** what limits it, along the time; worked out when asked for, since a figure shows one link's */
+  limits(): readonly LimitStretch[];
   /** fraction of frequency per metre of length equivalent, ḡ/c², m⁻¹ */
   readonly yPerM: number;
 }
@@ -65,7 +67,7 @@ export function averagingFigureOf(solved: SolvedCampaign): AveragingFigure {
       return {
         plan: plan.links[i]!,
         points: empty ? [] : pointsOf(budget, fromS, toS, yPerM),
-        limits: empty ? [] : limitsOf(budget, fromS, toS),
+        limits: () => (empty ? [] : limitsOf(budget, fromS, toS)),
         yPerM,
       };
     }),
@@ -75,8 +77,10 @@ export function averagingFigureOf(solved: SolvedCampaign): AveragingFigure {
 function pointsOf(budget: LinkBudget, fromS: number, toS: number, yPerM: number): AveragingPoint[] {
   const count = Math.ceil(Math.log10(toS / fromS) * POINTS_PER_DECADE);
   return Array.from({ length: count + 1 }, (_, i) => {
-    const { T, uH, uStat } = planPoint(budget, fromS * (toS / fromS) ** (i / count));
-    return { T, uH, uStatH: uStat / yPerM };
+    const T = fromS * (toS / fromS) ** (i / count);
+    const statistical = statisticalVariance(budget.noise, T * budget.uptime);
+    const uY = Math.sqrt(statistical + budget.systematicVariance);
+    return { T, uH: uY / yPerM, uStatH: Math.sqrt(statistical) / yPerM };
   });
 }
 

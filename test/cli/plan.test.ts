@@ -245,6 +245,32 @@ describe('import', () => {
     expect(plumbtick(['predict', '-'], piped.stdout).status).toBe(0);
   });
 
+  it('takes a new user from two tables to an answer: the sample of the documentation', () => {
+    const sample = (name: string) => path.join(example('.'), '..', '..', '..', 'sites', `two-countries-${name}.csv`);
+    const words = [
+      '--window',
+      '2027-05-03/2027-05-24',
+      '--target',
+      '3 cm',
+      '--source',
+      'zeta=quasigeoid:80km',
+      '--source',
+      'h=gnss:0.4',
+    ];
+    const { status, stdout } = plumbtick(['import', sample('sites'), '--links', sample('links'), ...words]);
+    expect(status).toBe(0);
+    const name = file('two-countries.json', stdout);
+    // no tide, source or datum is left to a default
+    expect(json<{ warnings: unknown[] }>(['predict', name]).warnings).toEqual([]);
+    const answer = json<{ links: { id: string; best: string }[] }>([
+      'break-even',
+      name,
+      '--levelling',
+      'second-order-I',
+    ]);
+    expect(answer.links.map(({ id, best }) => `${id} ${best}`)).toEqual(['hs clocks', 'sg levelling', 'hg levelling']);
+  });
+
   it('refuses by line and column, the table of links under its own name', () => {
     const bad = file('comma.csv', 'id;lat;lon\na;50,1;8\n');
     const { status, stderr } = plumbtick(['import', bad]);
