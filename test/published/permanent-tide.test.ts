@@ -65,6 +65,19 @@ describe('conversions', () => {
     expectWithin(tideConversion('physical-height', 'zero', 'free', phi, rounded), (0.3 - 0.6) * x, 1e-12);
     expectWithin(x, -0.198 * (1.5 * Math.sin(phi) ** 2 - 0.5), 2e-3, 'the usual form, rounded and on a sphere');
   });
+  test('C is as H, times γ₀, and W is opposite to C, in every direction (Ekman 1989; Mäkinen 2021)', () => {
+    const systems = ['mean', 'zero', 'free'] as const;
+    const gamma0 = normalGravity(GRS80, phi, 0);
+    for (const from of systems)
+      for (const to of systems) {
+        const C = tideConversion('geopotential-number', from, to, phi);
+        expectWithin(C, gamma0 * tideConversion('physical-height', from, to, phi), 1e-12, `C ${from}→${to}`);
+        expectWithin(tideConversion('potential', from, to, phi), -C, 1e-15, `W ${from}→${to}`);
+      }
+    // at a point fixed in space the crust does not matter: only k₂
+    expectWithin(tideConversion('fixed-point-potential', 'free', 'zero', phi), 0.3019 * x * gamma0, 1e-12);
+    expectWithin(tideConversion('fixed-point-potential', 'zero', 'mean', phi), x * gamma0, 1e-12);
+  });
   test('zero against mean tide between 45° and 52.3°: 4e-18', () => {
     const d =
       tideConversion('potential', 'zero', 'mean', degToRad(45)) - tideConversion('potential', 'zero', 'mean', phi);
