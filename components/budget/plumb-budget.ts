@@ -28,6 +28,9 @@ import { trialsView } from './trials-view.js';
 import { whatIfBox } from './what-if-box.js';
 import { changesOf, type Edits, type EditTarget, withFactor, without, withText } from './what-if-edits.js';
 
+/** Edits that follow each other faster than this share one answer to the questions. */
+const SETTLE_MS = 250;
+
 /** Everything that is shown of one link, as stated. */
 interface Shown {
   readonly campaign: Campaign;
@@ -138,8 +141,8 @@ export class PlumbBudget extends CampaignElement {
     if (this.#shown) {
       this.#trials.want(campaign, link, this.#ownTrials());
       clearTimeout(this.#later);
-      // not before the numbers themselves are on the screen
-      this.#later = setTimeout(() => this.#answerQuestions(), 0);
+      // not before the numbers themselves are on the screen, and not between two keystrokes
+      this.#later = setTimeout(() => this.#answerQuestions(), before ? SETTLE_MS : 0);
     } else this.#trials.clear();
   }
 

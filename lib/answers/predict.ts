@@ -79,6 +79,7 @@ export function predictionOf(solved: SolvedCampaign): Prediction {
     ...groupWarnings(model, potentials),
     ...combinationWarnings(model, sites, combination),
   ];
+  let correlations: Prediction['correlations'] | undefined;
   return {
     format: 'plumbtick-prediction/1',
     ...(campaign.title === undefined ? {} : { title: campaign.title }),
@@ -88,15 +89,19 @@ export function predictionOf(solved: SolvedCampaign): Prediction {
     clocks,
     links,
     checks: allChecks(solved),
-    correlations: correlationsOfOffsets(solved),
+    // made when it is read: of hundreds of links it takes longer than everything else
+    get correlations() {
+      correlations ??= correlationsOfOffsets(solved);
+      return correlations;
+    },
     warnings,
   };
 }
 
 export function budgetOf(model: Model, y: Dependent): BudgetRow[] {
-  return contributions(model.covariance, y.gradient).map(({ input, ...row }) => {
+  return contributions(model.covariance, y.gradient).map(({ input, sensitivity, uy, share }) => {
     const { path, value, u } = model.inputs[input]!;
-    return { input: path, value, u, ...row };
+    return { input: path, value, u, sensitivity, uy, share };
   });
 }
 

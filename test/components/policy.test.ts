@@ -50,12 +50,16 @@ describe('under a strict policy', () => {
       <plumb-floors dh="12.348(3) m" g="9.8125(1) m/s²"></plumb-floors>
       <plumb-pair a-lat="58.9712" a-lon="5.7305" a-h="51.3370(60) m" a-zeta="45.120(15) m"
         b-lat="58.8102" b-lon="6.4421" b-h="912.4402(70) m" b-zeta="45.377(18) m" correlation="0.48"></plumb-pair>
-      <plumb-campaign><script type="application/json">${campaign}</script><plumb-links></plumb-links></plumb-campaign>`);
+      <plumb-campaign><script type="application/json">${campaign}</script><plumb-links></plumb-links><plumb-budget></plumb-budget></plumb-campaign>`);
     const text = (tag: string, part: string) =>
       page.querySelector(tag)?.shadowRoot?.querySelector(part)?.textContent ?? '';
     expect(text('plumb-floors', '.s1')).to.contain('runs fast by');
     expect(text('plumb-pair', '.s1')).to.contain('9.40281(21)e-14');
     expect(text('plumb-links', '.say')).to.contain('agrees with its prediction');
+    expect(text('plumb-budget', '.say')).to.contain('is predicted to');
+    // trials run on the page unasked, in slices: no worker is tried
+    await aTimeout(1500);
+    expect(text('plumb-budget', '.two')).to.contain('The linear result holds');
     // the styles are there too, not only the words
     const sentence = page.querySelector('plumb-floors')!.shadowRoot!.querySelector('.s1')!;
     expect(page.defaultView!.getComputedStyle(sentence).fontSize).to.equal('18px');
