@@ -19,18 +19,18 @@ const NEGLIGIBLE_PART = 1e-12;
  *  (GUM 5.2.2, eq. 16, split by input). Rows by falling |share|. */
 export function contributions(covariance: InputCovariance, gradient: Gradient): Contribution[] {
   const withInputs = covariance.withInputs(gradient);
-  const rows: { input: number; sensitivity: number; uy: number; part: number }[] = [];
+  const { indices, values } = gradient;
   let variance = 0;
-  gradient.indices.forEach((input, k) => {
-    const sensitivity = gradient.values[k]!;
-    const part = sensitivity * withInputs[input]!;
-    variance += part;
-    rows.push({ input, sensitivity, uy: Math.abs(sensitivity) * covariance.inputs[input]!.u, part });
-  });
-  const u = Math.sqrt(Math.max(0, variance));
+  for (let k = 0; k < indices.length; k++) variance += values[k]! * withInputs[indices[k]!]!;
   // where everything cancels, u(y) is 0 and so is every share worth a row
-  return rows
-    .filter((r) => r.uy > NEGLIGIBLE_PART * u && r.uy > 0 && variance > 0)
-    .map(({ part, ...r }) => ({ ...r, share: part / variance }))
-    .sort((a, b) => Math.abs(b.share) - Math.abs(a.share) || a.input - b.input);
+  if (!(variance > 0)) return [];
+  const least = NEGLIGIBLE_PART * Math.sqrt(variance);
+  const rows: Contribution[] = [];
+  for (let k = 0; k < indices.length; k++) {
+    const input = indices[k]!;
+    const sensitivity = values[k]!;
+    const uy = Math.abs(sensitivity) * covariance.inputs[input]!.u;
+    if (uy > least) rows.push({ input, sensitivity, uy, share: (sensitivity * withInputs[input]!) / variance });
+  }
+  return rows.sort((a, b) => Math.abs(b.share) - Math.abs(a.share) || a.input - b.input);
 }

@@ -22,6 +22,12 @@ export function combineGradients(terms: readonly (readonly [weight: number, grad
 /** a + weight·b by merging the two sorted lists. */
 function addScaledGradient(a: Gradient, weight: number, b: Gradient): Gradient {
   if (a.indices.length === 0) return weight === 1 ? b : { indices: b.indices, values: b.values.map((v) => weight * v) };
+  if (sameIndices(a.indices, b.indices)) {
+    // one solve gives every site the same inputs: no merging then
+    const values = new Array<number>(a.values.length);
+    for (let k = 0; k < values.length; k++) values[k] = a.values[k]! + weight * b.values[k]!;
+    return { indices: a.indices, values };
+  }
   const indices: number[] = [];
   const values: number[] = [];
   let i = 0;
@@ -33,6 +39,13 @@ function addScaledGradient(a: Gradient, weight: number, b: Gradient): Gradient {
     values.push((x <= y ? a.values[i++]! : 0) + (y <= x ? weight * b.values[j++]! : 0));
   }
   return { indices, values };
+}
+
+function sameIndices(a: readonly number[], b: readonly number[]): boolean {
+  if (a === b) return true;
+  if (a.length !== b.length) return false;
+  for (let k = 0; k < a.length; k++) if (a[k] !== b[k]) return false;
+  return true;
 }
 
 /** Gradient from pairs of input index and derivative; an index named twice adds up. */
