@@ -2,7 +2,7 @@ import type { Campaign } from '../campaign/campaign.js';
 import { W0_IHRS } from '../constants/defining-constants.js';
 import type { NetworkUnknowns } from '../model/network-unknowns.js';
 import { hasLevel } from '../model/site-potentials.js';
-import { NETWORK_TEST } from '../uncertainty/detection.js';
+import { type DetectionTest, detectionFactor, NETWORK_TEST } from '../uncertainty/detection.js';
 import { chiSquareUpperTail } from '../uncertainty/distributions/index.js';
 import { reliability } from '../uncertainty/reliability.js';
 import type { AdjustedDatum, Adjustment } from './adjustment.js';
@@ -15,13 +15,16 @@ import { type SolvedCampaign, solveCampaign } from './solve-campaign.js';
 
 /** Potentials of all sites from every determination and every measurement.
  * @throws {CampaignError} what is undetermined or contradicts itself */
-export const adjust = (campaign: Campaign): Adjustment => adjustmentOf(solveCampaign(campaign), false);
+export const adjust = (campaign: Campaign, test?: DetectionTest): Adjustment =>
+  adjustmentOf(solveCampaign(campaign), false, test);
 
 /** The same with every link measured over the whole window: uncertainties only.
  * @throws {CampaignError} also without a window */
-export const adjustPlanned = (campaign: Campaign): Adjustment => adjustmentOf(solveCampaign(campaign), true);
+export const adjustPlanned = (campaign: Campaign, test?: DetectionTest): Adjustment =>
+  adjustmentOf(solveCampaign(campaign), true, test);
 
-export function adjustmentOf(solved: SolvedCampaign, planned: boolean): Adjustment {
+/** @param test size and power at which a mistake, an offset or a tilt is said to show */
+export function adjustmentOf(solved: SolvedCampaign, planned: boolean, test: DetectionTest = NETWORK_TEST): Adjustment {
   const { model, potentials } = solved;
   const { campaign, covariance } = model;
   const network = solveNetwork(campaign, networkProblem(solved, planned));
@@ -33,8 +36,9 @@ export function adjustmentOf(solved: SolvedCampaign, planned: boolean): Adjustme
   const estimate = (unknown: number) => ({
     ...(planned ? {} : { value: solution.estimate[columnOf.get(unknown)!]! }),
     u: u(unknown),
+    smallestDetectable: detectionFactor(test) * u(unknown),
   });
-  const tests = reliability(solution, observations.length);
+  const tests = reliability(solution, observations.length, test);
   const { chi2, dof } = solution;
   const tested = observations.map((o, i) => ({
     id: o.id,
@@ -42,7 +46,7 @@ export function adjustmentOf(solved: SolvedCampaign, planned: boolean): Adjustme
     ...tests[i]!,
     ...(planned ? { standardised: null } : {}),
   }));
-  const outliers = planned ? [] : suspectedOutliers(tested, NETWORK_TEST);
+  const outliers = planned ? [] : suspectedOutliers(tested, test);
   return {
     sites: campaign.sites.flatMap((site, s) =>
       columnOf.has(s)
@@ -64,7 +68,7 @@ export function adjustmentOf(solved: SolvedCampaign, planned: boolean): Adjustme
       }),
     ),
     observations: tested,
-    test: NETWORK_TEST,
+    test,
     ...(planned ? {} : { chi2, p: dof > 0 ? chiSquareUpperTail(chi2, dof) : null }),
     dof,
     loops: loopClosures(solved, planned),

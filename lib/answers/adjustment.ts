@@ -23,6 +23,8 @@ export interface AdjustedDatum {
 export interface UnknownEstimate {
   readonly value?: number;
   readonly u: number;
+  /** smallest offset or tilt that the test tells from none */
+  readonly smallestDetectable: number;
 }
 
 export interface AdjustedObservation {

@@ -1,4 +1,4 @@
-import type { Adjustment, LoopClosure } from '../answers/adjustment.js';
+import type { Adjustment, LoopClosure, UnknownEstimate } from '../answers/adjustment.js';
 import type { Campaign } from '../campaign/campaign.js';
 import { formatLength } from '../quantity/index.js';
 import { referencePotentialNote, SIGN_NOTE, tideNote } from './conventions.js';
@@ -92,17 +92,12 @@ function sitesTable({ sites }: Adjustment, planned: boolean): Table {
 }
 
 function datumsTable({ datums }: Adjustment, planned: boolean): Table {
-  const row = (
-    id: string,
-    what: string,
-    unit: string,
-    x: { readonly value?: number; readonly u: number },
-    scale: number,
-  ) => [
+  const row = (id: string, what: string, unit: string, x: UnknownEstimate, scale: number) => [
     textCell(id),
     textCell(what),
     planned ? none : estimateCell({ value: (x.value ?? 0) * scale, u: x.u * scale }, POTENTIAL, 'signed'),
     sizeCell(x.u * scale),
+    sizeCell(x.smallestDetectable * scale),
     textCell(unit),
   ];
   // a tilt per metre is a number nobody can read
@@ -115,6 +110,7 @@ function datumsTable({ datums }: Adjustment, planned: boolean): Table {
       textColumn('unknown'),
       estimateColumn('adjusted minus stated', null),
       numberColumn('u', null),
+      numberColumn('smallest detectable', null),
       textColumn('unit'),
     ],
     rows: datums.flatMap((d) => [

@@ -20,5 +20,3 @@ export const detectionFactor = ({ size, power }: DetectionTest): number =>
 
 /** 2.801585: size 0.05, power 0.8. */
 export const DETECTION_FACTOR = detectionFactor(COMPARISON_TEST);
-/** 4.132148: size 0.001, power 0.8. */
-export const NETWORK_DETECTION_FACTOR = detectionFactor(NETWORK_TEST);

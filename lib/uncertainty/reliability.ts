@@ -1,4 +1,4 @@
-import { NETWORK_DETECTION_FACTOR } from './detection.js';
+import { type DetectionTest, detectionFactor, NETWORK_TEST } from './detection.js';
 import type { LeastSquaresSolution } from './least-squares.js';
 import { choleskySolve, forwardSolve, identity, transpose } from './matrix.js';
 
@@ -20,7 +20,12 @@ const MIN_CONTROL = 1e-10;
  *  With Q = V − A·N⁻¹·Aᵀ and r the residuals: redundancy = diag(Q·V⁻¹), control = (V⁻¹QV⁻¹)_ii/(V⁻¹)_ii, standardised residual
  *  (V⁻¹r)_i/√(V⁻¹QV⁻¹)_ii, smallest detectable bias δ₀/√(V⁻¹QV⁻¹)_ii (Baarda 1968; Teunissen, Testing Theory, 2006, ch. 4;
  *  for correlated observations Wang & Chen 1994, Acta Geod. Cart. Sinica). */
-export function reliability(solution: LeastSquaresSolution, observations: number): ObservationReliability[] {
+export function reliability(
+  solution: LeastSquaresSolution,
+  observations: number,
+  test: DetectionTest = NETWORK_TEST,
+): ObservationReliability[] {
+  const factorOfTest = detectionFactor(test);
   const out: ObservationReliability[] = new Array(observations).fill(EXACT);
   const { weights, independent, residual } = solution;
   if (!weights) return out.fill(UNCONTROLLED);
@@ -49,7 +54,7 @@ export function reliability(solution: LeastSquaresSolution, observations: number
       redundancy: 1 - hat,
       control,
       standardised: controlled ? weightedResidual[j]![0]! / Math.sqrt(tested) : null,
-      smallestDetectable: controlled ? NETWORK_DETECTION_FACTOR / Math.sqrt(tested) : null,
+      smallestDetectable: controlled ? factorOfTest / Math.sqrt(tested) : null,
     };
   });
   return out;

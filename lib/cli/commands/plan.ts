@@ -3,8 +3,8 @@ import { planReport } from '../../report/plan-report.js';
 import { COMPARISON_TEST } from '../../uncertainty/detection.js';
 import { readCallCampaign } from '../campaign-of-call.js';
 import { chosenLinks } from '../chosen-links.js';
-import { type Command, UsageError } from '../command.js';
-import { exactOption } from '../exact-option.js';
+import type { Command } from '../command.js';
+import { detectionOptions, detectionTestOf } from '../detection-test.js';
 
 export const plan: Command = {
   name: 'plan',
@@ -17,18 +17,11 @@ export const plan: Command = {
   ],
   options: {
     link: { value: 'ID', help: 'the curve of that link', repeatable: true },
-    size: { value: 'P', help: 'chance of a false alarm of the test; 0.05 if not given' },
-    power: { value: 'P', help: 'chance that a discrepancy of the size given shows; 0.8 if not given' },
+    ...detectionOptions(COMPARISON_TEST),
   },
   examples: ['plumbtick plan campaign.json', 'plumbtick plan campaign.json --link ab --power 0.95'],
   run(call) {
-    const probability = (name: string) => exactOption('plan', call, name, { kind: 'fraction', above: 0, below: 1 });
-    const test = {
-      size: probability('size') ?? COMPARISON_TEST.size,
-      power: probability('power') ?? COMPARISON_TEST.power,
-    };
-    if (test.power <= test.size)
-      throw new UsageError(`plan: --power ${test.power} has to be more than --size ${test.size}`);
+    const test = detectionTestOf('plan', call, COMPARISON_TEST);
     const { campaign, title, refuseAt, withWarnings } = readCallCampaign(call);
     const links = chosenLinks('plan', call, campaign);
     const answer = withWarnings(refuseAt(() => planCampaign(campaign, test)));

@@ -208,6 +208,20 @@ describe('datum offset and tilt', () => {
   });
 });
 
+describe('what the network could see', () => {
+  test('4.132148 u of an offset or a tilt at size 0.001 and power 0.8 (Baarda 1968), 2.801585 u at 0.05', () => {
+    const at = (size?: number) => {
+      const [d] = adjustPlanned(
+        read(lattice({ tilt: true })),
+        size === undefined ? undefined : { size, power: 0.8 },
+      ).datums;
+      return [d!.offset!, d!.tilt!.north, d!.tilt!.east].map((x) => x.smallestDetectable / x.u);
+    };
+    for (const factor of at()) expectWithin(factor, 4.132148, 5e-7);
+    for (const factor of at(0.05)) expectWithin(factor, 2.801585, 5e-7);
+  });
+});
+
 describe('loops', () => {
   const ring = (times: boolean) => {
     const value = lattice();
