@@ -7,6 +7,8 @@ import type { SolvedCampaign } from './solve-campaign.js';
 
 /** What a shared error source does to the difference of the two inputs that name it, one at each of two sites. */
 export interface SharedError {
+  /** what the two inputs are: the key in the file, `zeta`, `N`, `h`, `g` … */
+  readonly quantity: string;
   /** correlation of the source between the two sites */
   readonly correlation: number;
   /** standard uncertainty of the difference of the two inputs, SI */
@@ -51,6 +53,12 @@ export function sitePairs({ model }: SolvedCampaign, source: string | null): rea
   return pairs.sort((a, b) => a.distanceM - b.distanceM);
 }
 
+/** Ids of the sources that inputs of at least two sites name, in file order. */
+export const sourcesBetweenSites = ({ model }: SolvedCampaign): readonly string[] =>
+  model.campaign.sources
+    .map(({ id }) => id)
+    .filter((id) => model.campaign.sites.filter((site) => firstInputOf(model, site.id, id) !== null).length > 1);
+
 /** Index of the first input of a site that names the source. */
 function firstInputOf({ inputs }: Model, site: string, source: string): number | null {
   const found = inputs.findIndex(
@@ -62,6 +70,7 @@ function firstInputOf({ inputs }: Model, site: string, source: string): number |
 function sharedError({ inputs, covariance }: Model, source: string, p: number, q: number): SharedError {
   const of = covariance.sources.find(({ id }) => id === source)!;
   return {
+    quantity: inputs[p]!.path.split('.').at(-1)!,
     correlation: correlationOf(of, inputs[p]!.place, inputs[q]!.place),
     uDifference: Math.sqrt(
       covariance.variance(

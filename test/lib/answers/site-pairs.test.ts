@@ -1,6 +1,6 @@
 import { readFileSync } from 'node:fs';
 import { describe, expect, it } from 'vitest';
-import { sitePairs } from '../../../lib/answers/site-pairs.js';
+import { sitePairs, sourcesBetweenSites } from '../../../lib/answers/site-pairs.js';
 import { solveCampaign } from '../../../lib/answers/solve-campaign.js';
 import { readCampaign } from '../../../lib/campaign/read.js';
 import { expectWithin } from '../../expect-within.js';
@@ -57,7 +57,13 @@ describe('sites two by two', () => {
     expectWithin(shared('g', 'a', 'b')!.correlation, 0.4, 0);
     expectWithin(shared('g', 'a', 'b')!.uDifference, 0.005 * Math.sqrt(2 * 0.6), 1e-15);
     expect(shared('g', 'a', 'c')).toBe(null);
+    expect(shared('g', 'a', 'b')!.quantity).toBe('h');
+    expect(sourcesBetweenSites(file)).toEqual(['g', 'p']);
     expectWithin(shared('p', 'c', 'd')!.correlation, 1, 0);
     expectWithin(shared('p', 'c', 'd')!.uDifference, 0, 1e-12);
+    const { sources, ...rest } = file.model.campaign;
+    expect(sources).toHaveLength(2);
+    const alone = { ...rest, sources: [...sources, { id: 'unused' }] };
+    expect(sourcesBetweenSites(solveCampaign(alone))).toEqual(['g', 'p']);
   });
 });
