@@ -72,9 +72,11 @@ export function budgetTable(context: BudgetTableContext): TemplateResult {
       <tr role="row">
         <th scope="col" role="columnheader">input</th>
         <th scope="col" role="columnheader" class="c-u"><i class="s">u</i>(<i class="s">x</i>)</th>
-        <th scope="col" role="columnheader" class="c-c">
-          ${context.hasSensitivity ? html`<i class="s">c</i> / 1e-18 <span class="nb">per unit</span>` : nothing}
-        </th>
+        ${
+          context.hasSensitivity
+            ? html`<th scope="col" role="columnheader" class="c-c"><i class="s">c</i> / 1e-18 <span class="nb">per unit</span></th>`
+            : html`<td role="cell" class="c-c"></td>`
+        }
         <th scope="col" role="columnheader" class="c-uy">
           <span class="nb"><i class="s">c</i>·<i class="s">u</i> / 1e-18</span>
         </th>
