@@ -9,6 +9,7 @@ import path from 'node:path';
 import { fileURLToPath, pathToFileURL } from 'node:url';
 import * as esbuild from 'esbuild';
 import { inlineWorker } from './esbuild-plugins.mjs';
+import { smallPackages, smallTemplates } from './smaller.mjs';
 
 const root = fileURLToPath(new URL('..', import.meta.url));
 const { version } = JSON.parse(fs.readFileSync(path.join(root, 'package.json'), 'utf8'));
@@ -26,6 +27,10 @@ const common = {
   plugins: [inlineWorker],
   outdir: 'dist',
 };
+
+/** What a <script> tag loads. */
+const classicScript = { format: 'iife', minify: true, legalComments: 'eof' };
+const classicNames = ['plumbtick.js', 'plumb-floors.js', 'plumb-pair.js'];
 
 /** The command line in one file, that of its packages included. */
 const commandLine = {
@@ -76,6 +81,7 @@ export async function build({ types = false, dist = ownFolder } = {}) {
   const results = await Promise.all([
     esbuild.build({
       ...common,
+      plugins: [inlineWorker, smallTemplates],
       entryPoints: { index: 'lib/index.ts', components: 'components/index.ts' },
       format: 'esm',
       packages: 'external',
@@ -85,11 +91,20 @@ export async function build({ types = false, dist = ownFolder } = {}) {
     }),
     esbuild.build({
       ...common,
+      ...classicScript,
+      plugins: [inlineWorker, smallTemplates, smallPackages({ lines: true })],
       entryPoints: { plumbtick: 'components/index.ts' },
-      format: 'iife',
       globalName: 'plumbtick',
-      minify: true,
-      legalComments: 'eof',
+    }),
+    // for a page that wants one of the small elements alone
+    esbuild.build({
+      ...common,
+      ...classicScript,
+      plugins: [inlineWorker, smallTemplates, smallPackages({ lines: false })],
+      entryPoints: {
+        'plumb-floors': 'components/floors/plumb-floors.define.ts',
+        'plumb-pair': 'components/pair/plumb-pair.define.ts',
+      },
     }),
     esbuild.build(commandLine),
   ]);
@@ -101,9 +116,9 @@ export async function build({ types = false, dist = ownFolder } = {}) {
   for (const { path: file, text } of results.flatMap((result) => result.outputFiles)) {
     const name = path.basename(file);
     const target = path.join(dist, name);
-    if (name === 'plumbtick.js') {
+    if (classicNames.includes(name)) {
       put(target, byteOrderMark + text);
-      put(path.join(dist, 'standalone.html'), standalonePage(text));
+      if (name === 'plumbtick.js') put(path.join(dist, 'standalone.html'), standalonePage(text));
     } else put(target, text, name === 'cli.js' ? 0o755 : 0o644);
   }
   const { campaignJsonSchema } = await import(`${pathToFileURL(path.join(dist, 'index.js'))}?${Date.now()}`);

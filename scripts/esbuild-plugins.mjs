@@ -1,5 +1,6 @@
 import path from 'node:path';
 import * as esbuild from 'esbuild';
+import { smallPackages } from './smaller.mjs';
 /** import src from 'inline-worker:./x.worker.ts' -> the worker bundled as one classic script, as a string */
 export const inlineWorker = {
   name: 'inline-worker',
@@ -19,6 +20,7 @@ export const inlineWorker = {
         define: b.initialOptions.define,
         external: b.initialOptions.external,
         legalComments: 'none', // the licences stand once, in the bundle that carries it
+        plugins: [smallPackages({ lines: false })],
         write: false,
       });
       return { contents: r.outputFiles[0].text, loader: 'text', watchFiles: [a.path] };

@@ -112,9 +112,13 @@ const scanExponent = (text: string, from: number, refuse: (at: number) => never)
   return { twice: (negative ? -2 : 2) * digit, end: i + 1 };
 };
 
+/** By multiplication: a general power would bring logarithms of a thousand digits into every page. */
 const power = (factor: Decimal, twice: number): Decimal => {
   const n = Math.abs(twice);
-  return n % 2 === 1 ? factor.sqrt() : factor.pow(n / 2);
+  if (n % 2 === 1) return factor.sqrt();
+  let product = factor;
+  for (let i = 1; i < n / 2; i++) product = product.times(factor);
+  return product;
 };
 
 /** Reads the unit that fills text[from, to) and checks that it measures `kind`.
