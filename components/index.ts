@@ -11,6 +11,7 @@ import './network/plumb-network.define.js';
 import './pair/plumb-pair.define.js';
 import './section/plumb-section.define.js';
 import './series/plumb-series.define.js';
+import './tide/plumb-tide.define.js';
 
 export { version } from '../lib/constants/version.js';
 export { PlumbAveraging } from './averaging/plumb-averaging.js';
@@ -29,3 +30,4 @@ export { PlumbSeries } from './series/plumb-series.js';
 export type { PlumbChange } from './shared/article-element.js';
 export type { AnsweredCampaign, CampaignState } from './state/campaign-context.js';
 export type { PlumbSelect } from './state/in-hand.js';
+export { PlumbTide } from './tide/plumb-tide.js';

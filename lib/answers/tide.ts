@@ -41,6 +41,8 @@ export interface LinkTide {
   readonly rms: number;
   /** bound on y of what the model leaves out */
   readonly omitted: number;
+  /** c²/ḡ, m: what turns the numbers above into length equivalents */
+  readonly lengthPerOffset: number;
   /** null where the stated availability has no instant in the window */
   readonly left: TideLeft | null;
   /** the target as a frequency offset; null without a target */
@@ -97,7 +99,8 @@ export function tide(campaign: Campaign, stepS: number = TIDE_STEP_S): TideAnswe
       over: stated === null ? 'window' : 'availability',
       seconds: means.seconds,
     };
-    const target = campaign.targetM === null ? null : (campaign.targetM * meanGravity(campaign, a, b)) / C2;
+    const lengthPerOffset = C2 / meanGravity(campaign, a, b);
+    const target = campaign.targetM === null ? null : campaign.targetM / lengthPerOffset;
     return {
       id: link.id,
       from: link.from,
@@ -105,6 +108,7 @@ export function tide(campaign: Campaign, stepS: number = TIDE_STEP_S): TideAnswe
       ...statistics(series[l]!),
       // clocks on one piece of crust feel one tide, and whatever the model leaves out of it
       omitted: a === b ? 0 : (omittedAt(campaign, a) + omittedAt(campaign, b)) / C2,
+      lengthPerOffset,
       left,
       target,
       needsCorrecting: target === null || left === null ? null : Math.abs(left.mean) > HARMLESS_SHARE * target,
