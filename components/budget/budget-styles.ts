@@ -671,7 +671,7 @@ export const budgetStyles = css`
       width: 24%;
     }
     .budget thead .c-sh {
-      width: 52px;
+      width: 64px;
     }
     .bhead {
       grid-template-columns: minmax(0, 1fr);

@@ -6,7 +6,7 @@ import { type LinkUncertainty, linkUncertainty, whatIf } from '../../lib/answers
 import type { Campaign } from '../../lib/campaign/campaign.js';
 import { CampaignError, type Fault } from '../../lib/campaign/fault.js';
 import { type BudgetExport, changeText } from '../../lib/report/budget-export.js';
-import { LENGTH_NOTE, SIGN_NOTE, tideNote } from '../../lib/report/conventions.js';
+import { LENGTH_NOTE, referencePotentialNote, SIGN_NOTE, tideNote } from '../../lib/report/conventions.js';
 import { faultInPlace } from '../campaign/fault-in-place.js';
 import { PlumbElement } from '../plumb-element.js';
 import { CampaignElement } from '../shared/campaign-element.js';
@@ -367,7 +367,7 @@ export class PlumbBudget extends CampaignElement {
       <p class="note">
         A share is cov(<i class="s">y</i>, <i class="s">c</i>·<i class="s">x</i>)/<i class="s">u</i>²(<i class="s">y</i>): shares
         add up to 100 %, and one can be negative. Outlined: a shared source, its inputs below it. Weights of redundant
-        determinations follow what is tried. ${tideNote(campaign.tide)} ${SIGN_NOTE} ${sentenceCase(LENGTH_NOTE)}
+        determinations follow what is tried. ${tideNote(campaign.tide)} ${referencePotentialNote(campaign)} ${SIGN_NOTE} ${sentenceCase(LENGTH_NOTE)}
       </p>`;
   }
 

@@ -145,14 +145,18 @@ export function linkQuestions(
   return {
     id: campaign.links[link]!.id,
     uM,
-    inputs: best(parts, gainOfHalving(budget), (part) => improvement(part.source, part, part.share)),
+    inputs: best(
+      parts,
+      (part) => varianceGain(budget, part, 0.5),
+      (part) => improvement(part.source, part, part.share),
+    ),
     sources: best(
       shared,
       (group) => group.share,
       (group) => improvement(group.source, null, group.share),
     ),
     harmful: parts.filter(
-      (part) => part.share < -SMALL_SHARE || exactGain(budget)(part) < (WORTH ** 2 - 1) * budget.u ** 2,
+      (part) => part.share < -SMALL_SHARE || varianceGain(budget, part, 0) < (WORTH ** 2 - 1) * budget.u ** 2,
     ),
     idle: idleEfforts(solved, link, budget),
     gravity: gravityVisits(model, link, q, uM),
@@ -165,16 +169,12 @@ const changeOf = (source: string | null, part: BudgetPart | null, factor: number
     ? { kind: 'part', input: part.input, source, amount: { factor } }
     : { kind: 'source', source: source!, amount: { factor } };
 
-/** Of a part with variance q alone and covariance share·u² with y, scaling its u by f takes (1 − f²)·q + 2·(1 − f)·(share·u² − q)
- *  out of u²(y), the weights as they are. */
-const gain =
-  ({ u }: GroupedBudget, factor: number) =>
-  ({ effect, share }: BudgetPart): number => {
-    const alone = effect * effect;
-    return (1 - factor * factor) * alone + 2 * (1 - factor) * (share * u * u - alone);
-  };
-const gainOfHalving = (budget: GroupedBudget) => gain(budget, 0.5);
-const exactGain = (budget: GroupedBudget) => gain(budget, 0);
+/** What scaling the u of one part by a factor takes out of u²(y), the weights as they are: of a part with variance q alone and
+ *  covariance share·u² with y, (1 − f²)·q + 2·(1 − f)·(share·u² − q). Negative where its error takes part of others' away. */
+export function varianceGain({ u }: GroupedBudget, { effect, share }: BudgetPart, factor: number): number {
+  const alone = effect * effect;
+  return (1 - factor * factor) * alone + 2 * (1 - factor) * (share * u * u - alone);
+}
 
 const EFFORTS: Readonly<Record<string, Effort>> = {
   g: 'gravity',

@@ -1,7 +1,9 @@
 import { describe, expect, test } from 'vitest';
+import { groupedBudget } from '../../../lib/answers/budget-groups.js';
 import { predict } from '../../../lib/answers/predict.js';
-import { effortOf, type LabelError, linkQuestions } from '../../../lib/answers/questions.js';
+import { effortOf, type LabelError, linkQuestions, varianceGain } from '../../../lib/answers/questions.js';
 import { solveCampaign } from '../../../lib/answers/solve-campaign.js';
+import { linkUncertainty, whatIf } from '../../../lib/answers/what-if.js';
 import { readCampaignValue } from '../../../lib/campaign/read.js';
 import { expectWithin } from '../../expect-within.js';
 
@@ -77,6 +79,8 @@ describe('a wrong tide label', () => {
   ] as const)('%s', (path, key, systems) => {
     const label = tideLabels.find((one) => one.path === path)!;
     expect(label.errors.map(({ system }) => system).sort()).toEqual([...systems].sort());
+    const [first, second] = label.errors.map(({ y: error }) => Math.abs(error));
+    expect(first).toBeGreaterThanOrEqual(second!);
     for (const system of systems) {
       const { y: error, lengthM } = errorOf(label.errors, system);
       const found = y(campaign({ [key]: system })).value - stated.value;
@@ -134,6 +138,20 @@ describe('what would help most', () => {
     expect(inputs.every(({ exactM, halvedM }) => exactM <= halvedM && halvedM < uM)).toBe(true);
   });
 
+  test('what a factor takes out of the variance, by the Jacobian: what solving again gives where nothing is redundant', () => {
+    const { sites, ...rest } = campaign();
+    const single = { ...rest, sites: sites.map((s) => ({ ...s, determinations: s.determinations.slice(0, 1) })) };
+    const solved = solveCampaign(single);
+    const budget = groupedBudget(solved.model.covariance, solved.links[0]!.y.gradient);
+    const { y: now } = linkUncertainty(solved, 0)!;
+    for (const part of budget.groups.flatMap(({ parts }) => parts))
+      for (const factor of [0, 0.5, 2]) {
+        const { input, source } = part;
+        const then = whatIf(solved, 0, [{ kind: 'part', input, source, amount: { factor } }])!.y;
+        expectWithin(varianceGain(budget, part, factor), now.u ** 2 - then.u ** 2, 1e-12 * now.u ** 2, input);
+      }
+  });
+
   test('a shared source as a whole', () => {
     const { sources } = questionsOf();
     expect(sources.map(({ source }) => source)).toEqual(['geoid']);
@@ -178,7 +196,7 @@ describe('is a gravity visit needed', () => {
 
   test('where g is a default and the tie long it is: what the campaign with exact g and gradient says', () => {
     const precise = { zetaA: '47.8320(1) m', C: '1085.480(1) m²/s²' };
-    const c = campaign({}, { ...precise, gA: {}, gradientA: { gradient: '3.1(9)e-6 s⁻²' } });
+    const c = campaign({}, { ...precise, gA: {}, gradientA: { gradient: '3.1(90)e-6 s⁻²' } });
     const [a] = questionsOf(c).gravity;
     expect(a).toMatchObject({ gStated: false, gradientStated: true });
     const g = solveCampaign(c).model.inputs.find(({ path }) => path === 'sites.a.g')!.value;

@@ -3,7 +3,13 @@ import { describe, expect, test } from 'vitest';
 import { plan } from '../../../lib/answers/plan.js';
 import { predict } from '../../../lib/answers/predict.js';
 import { solveCampaign } from '../../../lib/answers/solve-campaign.js';
-import { lengthUncertaintyIf, linkUncertainty, type WhatIfChange, whatIf } from '../../../lib/answers/what-if.js';
+import {
+  lengthUncertaintyIf,
+  linkUncertainty,
+  type WhatIfChange,
+  whatIf,
+  withChanges,
+} from '../../../lib/answers/what-if.js';
 import { CampaignError } from '../../../lib/campaign/fault.js';
 import { readCampaignValue } from '../../../lib/campaign/read.js';
 import { expectWithin } from '../../expect-within.js';
@@ -181,6 +187,12 @@ describe('properties', () => {
     const before = linkUncertainty(solved, 0);
     whatIf(solved, 0, [...everything(3), { kind: 'correlation', source: 'gnss', correlation: 0 }]);
     expect(linkUncertainty(solved, 0)).toEqual(before);
+  });
+
+  test('the parts of an input add as squares', () => {
+    const path = 'sites.a.determinations.0.zeta';
+    const { inputs } = withChanges(solved, [part(path, 'geoid', 2)]).model;
+    expectWithin(inputs.find((x) => x.path === path)!.u, Math.hypot(0.028, 0.005), 1e-15);
   });
 
   test('factor 0 is exact, factor 1 nothing', () => {

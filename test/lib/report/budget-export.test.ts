@@ -50,6 +50,16 @@ describe('the budget of a link, exported', () => {
       .map((row) => row[6]!)
       .reduce((sum, cell) => sum + (cell.kind === 'number' ? cell.value : Number.NaN), 0);
     expect(Math.abs(shares - 100)).toBeLessThan(1e-9);
+    const tie = budget!.rows.find((row) => row[1]!.text === 'clock r1, tie door to atoms')!;
+    expect(tie.map(({ text }) => text)).toEqual([
+      'alone',
+      tie[1]!.text,
+      '0.020',
+      'm',
+      '\u2212109.2',
+      '\u22122.18',
+      '20.4',
+    ]);
     expect(comparison!.rows.map((row) => row[1]!.text)).toContain('offset of 171Yb');
   });
 
