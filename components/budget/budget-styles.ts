@@ -536,9 +536,6 @@ export const budgetStyles = css`
         display: block;
         width: auto;
       }
-      .budget tr.closed {
-        display: none;
-      }
       .budget thead {
         position: absolute;
         width: 1px;

@@ -25,6 +25,8 @@ export interface BudgetTableContext {
   readonly edits: Edits;
   /** groups whose inputs are shown, and 'rest' */
   readonly open: ReadonlySet<string>;
+  /** on paper everything is open; on screen what is folded is not even made, for it takes longer than the rest */
+  readonly isPrinting: boolean;
   /** the row whose control is shown where there is room for one only */
   readonly inHand: string | null;
   /** of the caption, and in the names of controls */
@@ -89,7 +91,7 @@ export function budgetTable(context: BudgetTableContext): TemplateResult {
     </thead>
     <tbody role="rowgroup">
       ${main.map((group) => groupRows(context, group, axis, ''))}
-      ${rest.map((group) => groupRows(context, group, axis, showRest ? '' : 'closed'))}
+      ${showRest || context.isPrinting ? rest.map((group) => groupRows(context, group, axis, '')) : nothing}
       <tr role="row" class="rest">
         <th scope="row" role="rowheader">
           ${
@@ -129,7 +131,7 @@ function groupRows(
   const isOpen = open.has(key);
   const later = changed?.groups.find((one) => one.source === id) ?? null;
   const target: EditTarget = { kind: 'source', source: id, measures: kindOfSource(model, id) };
-  const members = `${className} kid ${isOpen ? '' : 'closed'}`;
+  const members = `${className} kid`;
   return html`${row(context, {
     target,
     className: `grp ${className}`,
@@ -145,7 +147,12 @@ function groupRows(
     kind: 'shared',
     axis,
   })}
-  ${parts.map((part) => partRow(context, part, axis, members, id))} ${cancellationRow(context, group, `${members} last`)}`;
+  ${
+    isOpen || context.isPrinting
+      ? html`${parts.map((part) => partRow(context, part, axis, members, id))}
+          ${cancellationRow(context, group, `${members} last`)}`
+      : nothing
+  }`;
 }
 
 /** u of the inputs of a source: one where they are alike, else from … to. */

@@ -1,4 +1,5 @@
 import { type CSSResultGroup, html, nothing, type PropertyValues, type TemplateResult } from 'lit';
+import type { GroupedBudget } from '../../lib/answers/budget-groups.js';
 import { type Limits, limitsOf } from '../../lib/answers/limits.js';
 import { type LinkQuestions, linkQuestions } from '../../lib/answers/questions.js';
 import { validationSentence } from '../../lib/answers/validation-sentence.js';
@@ -30,6 +31,9 @@ import { changesOf, type Edits, type EditTarget, withFactor, without, withText }
 
 /** Edits that follow each other faster than this share one answer to the questions. */
 const SETTLE_MS = 250;
+
+const printing = matchMedia('print');
+const PRINT_EVENTS = ['beforeprint', 'afterprint'] as const;
 
 /** Everything that is shown of one link, as stated. */
 interface Shown {
@@ -91,6 +95,7 @@ export class PlumbBudget extends CampaignElement {
   #form: ExportForm = 'Markdown';
   #isExporting = false;
   #copied = '';
+  #isPrinting = false;
 
   constructor() {
     super();
@@ -98,9 +103,22 @@ export class PlumbBudget extends CampaignElement {
     this.trials = null;
   }
 
+  readonly #onPrint = (event: Event): void => {
+    this.#isPrinting = event.type === 'beforeprint';
+    this.requestUpdate();
+  };
+
+  override connectedCallback(): void {
+    super.connectedCallback();
+    for (const type of PRINT_EVENTS) window.addEventListener(type, this.#onPrint);
+    printing.addEventListener('change', this.#onPrint);
+  }
+
   override disconnectedCallback(): void {
     super.disconnectedCallback();
     clearTimeout(this.#later);
+    for (const type of PRINT_EVENTS) window.removeEventListener(type, this.#onPrint);
+    printing.removeEventListener('change', this.#onPrint);
   }
 
   /** u of the length equivalent of the link in hand, m, as stated and with what was changed; null: nothing shown, or not changed. */
@@ -294,6 +312,7 @@ export class PlumbBudget extends CampaignElement {
       model: solvedOf(shown.campaign).model,
       edits: this.#edits,
       open: this.#openOf(shown),
+      isPrinting: printing.matches || this.#isPrinting,
       inHand: this.#row,
       factor: this.#factor,
       type: this.#type,
@@ -315,7 +334,7 @@ export class PlumbBudget extends CampaignElement {
       ${budgetTable(
         this.#tableContext(shown, {
           stated: systematic,
-          changed: this.#changed?.uncertainty?.outlook.systematic ?? null,
+          changed: ifMoved(systematic, this.#changed?.uncertainty?.outlook.systematic),
           id: 'k',
           caption: 'What only the comparison contains',
           shareHead: 'share of the systematics',
@@ -353,7 +372,7 @@ export class PlumbBudget extends CampaignElement {
           : budgetTable(
               this.#tableContext(shown, {
                 stated: uncertainty.budget,
-                changed: changed?.budget ?? null,
+                changed: ifMoved(uncertainty.budget, changed?.budget),
                 id: 'b',
                 caption: `What the uncertainty of link ${uncertainty.id} is made of`,
                 shareHead: 'share of the variance',
@@ -361,7 +380,7 @@ export class PlumbBudget extends CampaignElement {
               }),
             )
       }
-      ${this.#comparison(shown)} ${trialsView(this.#trials, uncertainty, this.#figureWidth())}
+      ${this.#comparison(shown)} ${trialsView(this.#trials, uncertainty, this.#figureWidth(), changed !== null)}
       ${exact ? nothing : questionsView({ campaign, open: this.#openOf(shown), toggle: this.#toggle }, questions)}
       ${this.#exporting(shown)}
       <p class="note">
@@ -433,6 +452,10 @@ export class PlumbBudget extends CampaignElement {
       ${super.content()}`;
   }
 }
+
+/** A changed budget that differs from the stated one; else null, and no mark stands on its bars. */
+const ifMoved = (stated: GroupedBudget, changed: GroupedBudget | undefined): GroupedBudget | null =>
+  changed === undefined || changed.u === stated.u ? null : changed;
 
 /** Changes whose input or source the campaign still has. */
 function stillThere(edits: Edits, model: ReturnType<typeof solvedOf>['model']): Edits {

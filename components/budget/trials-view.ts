@@ -12,8 +12,15 @@ const SCALE = 1e18;
 /** What a reader can ask for beyond what the page runs by itself. */
 const MORE = 1_000_000;
 
-/** The trials beside the linear result: figure, verdict in words, how to run more of them. @param width px of the figure */
-export function trialsView(trials: TrialsController, uncertainty: LinkUncertainty, width: number): TemplateResult {
+/** The trials beside the linear result: figure, verdict in words, how to run more of them.
+ * @param width px of the figure
+ * @param isTrying something is changed, of which the trials know nothing */
+export function trialsView(
+  trials: TrialsController,
+  uncertainty: LinkUncertainty,
+  width: number,
+  isTrying: boolean,
+): TemplateResult {
   const { result, failure } = trials;
   const [output] = result?.outputs ?? [];
   if (uncertainty.y.u === 0) return html``;
@@ -24,6 +31,7 @@ export function trialsView(trials: TrialsController, uncertainty: LinkUncertaint
       <h3>${words?.title ?? 'Is the linear result right'}</h3>
       ${trials.isCurrent || !result ? nothing : html`<p class="tagc">before the last change of the campaign</p>`}
       ${words ? html`<p>${richText(words.text)}</p>` : nothing}
+      ${words && isTrying ? html`<p class="dim no-print">The trials are of the stated values.</p>` : nothing}
       ${failure === null ? nothing : html`<div class="flt"><p class="hd">Not computed</p><p>${failure}</p></div>`}
       ${trials.running ? progress(trials, trials.running) : more(trials)}
       ${
