@@ -2,10 +2,10 @@ import type { Section } from '../../lib/answers/section.js';
 import type { SectionPlanInput } from './section-plan.js';
 import { type SectionScale, sectionScale } from './section-scale.js';
 
-const HIGH_PX = { wide: 440, narrow: 300 };
-const PER_BREAK_PX = { wide: 70, narrow: 50 };
+const HIGH_PX = { wide: 440, narrow: 300, low: 304 };
+const PER_BREAK_PX = { wide: 70, narrow: 50, low: 26 };
 /** Above the highest and below the lowest there is room for a label of three lines. */
-const PADDING_PX = { wide: 40, narrow: 24 };
+const PADDING_PX = { wide: 40, narrow: 24, low: 27 };
 /** Under the lowest site its label; under the reference level nothing. */
 const BELOW_PX = { wide: 66, narrow: 40 };
 const UNDER_ZERO_PX = 22;
@@ -42,7 +42,7 @@ function contentOf(section: Section) {
 }
 
 /** The scale of a section, its height, and how thick uncertainties are drawn on it. */
-export function scaleFor({ section, links, narrow }: SectionPlanInput): SectionExtent {
+export function scaleFor({ section, links, narrow, low }: SectionPlanInput): SectionExtent {
   const size = narrow ? 'narrow' : 'wide';
   const uncertainties = [...section.sites.map(({ C }) => C.u), ...links.map(({ uPotential }) => uPotential)];
   const typical = median(uncertainties);
@@ -50,18 +50,19 @@ export function scaleFor({ section, links, narrow }: SectionPlanInput): SectionE
   const content = contentOf(section);
   const ties = content.map(({ from, to }) => to - from).filter((extent) => extent > 0);
   const details = [median(ties), USUAL_MULTIPLE * typical].filter((detail) => detail > 0);
+  const high = low && !narrow ? 'low' : size;
   const of = (contents: readonly { from: number; to: number }[], height: number) =>
     sectionScale(contents, {
       paddingBelow:
         contents.some(({ to }) => to === 0) && content.every(({ from }) => from >= 0) ? UNDER_ZERO_PX : BELOW_PX[size],
       top: 30,
       bottom: height,
-      padding: PADDING_PX[size],
+      padding: high === 'low' ? PADDING_PX.low : PADDING_PX[size],
       breakHeight: BREAK_PX[size],
       detail: details.length === 0 ? 0 : Math.min(...details),
       largestBand: USUAL_MULTIPLE * (largestU < 3 * typical ? largestU : typical),
     });
-  const heightFor = (breaks: number) => HIGH_PX[size] + PER_BREAK_PX[size] * Math.max(0, breaks - 1);
+  const heightFor = (breaks: number) => HIGH_PX[high] + PER_BREAK_PX[high] * Math.max(0, breaks - 1);
   const withZero = [...content, { from: 0, to: 0 }];
   const first = of(content, heightFor(1));
   // the reference level belongs on the section unless it would cost a break of its own

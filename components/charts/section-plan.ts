@@ -28,6 +28,8 @@ export interface SectionPlanInput {
   readonly right: number;
   /** labels of one word only */
   readonly narrow: boolean;
+  /** lower, for a sheet that holds more than the section */
+  readonly low?: boolean;
   /** id of the clock that the loupe stands on; its level is carried over to the right */
   readonly underLoupe: (scale: SectionScale) => string | null;
   /** what the reference level is called */

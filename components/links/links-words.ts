@@ -73,6 +73,24 @@ export function verdictSentence({ links }: Evaluation, unmeasured: number): Rich
   });
 }
 
+/** The same in a few words, for a narrow column. */
+export function shortReason(link: LinkEvaluation): RichText {
+  const { residualLength, smallestDetectableM, verdict } = link;
+  if (!residualLength || smallestDetectableM === null) return ['No common level.'];
+  const U = COVERAGE * residualLength.u;
+  if (verdict === 'inconclusive') return [num(formatLength(smallestDetectableM, 2)), ' or more would have shown.'];
+  if (verdict === 'differ' && U > 0)
+    return [
+      num(formatConcise(Math.abs(residualLength.value) / U, null, { significant: 2 })),
+      ' times ',
+      sym('U'),
+      ' = ',
+      num(formatLength(U, 2)),
+      '.',
+    ];
+  return ['Within ', sym('U'), ' = ', num(formatLength(U, 2)), '.'];
+}
+
 /** One line of reason under the verdict. */
 export function reason(link: LinkEvaluation, effectM: number | null): RichText {
   const { residualLength, smallestDetectableM } = link;

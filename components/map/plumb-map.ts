@@ -15,7 +15,7 @@ import { linkLineClass, linkLineStyles } from '../charts/link-line.js';
 import { type MapLink, type MapPlan, mapPlan } from '../charts/map-plan.js';
 import { clamped, fitted, type MapFrame, MapProjection, type MapView } from '../charts/map-projection.js';
 import { PlumbElement } from '../plumb-element.js';
-import { CampaignElement } from '../shared/campaign-element.js';
+import { DrawingElement } from '../shared/drawing-element.js';
 import { plainText, richText } from '../shared/rich-text.js';
 import { WidthController } from '../shared/width-controller.js';
 import { oncePerCampaign, solvedOf } from '../state/answers.js';
@@ -82,7 +82,7 @@ const ARROWS: Readonly<Record<string, readonly [east: number, north: number]>> =
  * @csspart figure The map.
  * @csspart provenance The line that says who computed it and when.
  * @cssproperty [--plumb-paper] Ground; likewise `--plumb-ink` and the other colours. */
-export class PlumbMap extends CampaignElement {
+export class PlumbMap extends DrawingElement {
   static override properties: PropertyDeclarations = {
     source: { type: String },
     editable: { type: Boolean },
@@ -468,11 +468,13 @@ export class PlumbMap extends CampaignElement {
       inHand,
       projection,
     );
+    const drawing = this.#map(campaign, plan, links, projection, inHand, plainText(say));
+    if (this.bare) return html`${drawing} ${mapKey(campaign, source, this.editable)}`;
     const reading = this.pointed ?? (inHand === null ? null : `link ${inHand}`);
     return html`<p class="say">${richText(say)}</p>
       <div class="sheet ${wide ? 'wide' : ''}">
         <div>
-          ${this.#map(campaign, plan, links, projection, inHand, plainText(say))} ${this.#bar(campaign, source)}
+          ${drawing} ${this.#bar(campaign, source)}
           <p class="reading dim no-print">${reading === null ? '' : this.#label(campaign, links, reading)}</p>
         </div>
         <div>${pairsTable(campaign, pairs, inHand)} ${mapKey(campaign, source, this.editable)}</div>

@@ -3,7 +3,7 @@ import { section, tieShare } from '../../lib/answers/section.js';
 import { linkLineClass, linkLineStyles } from '../charts/link-line.js';
 import { sectionPlan } from '../charts/section-plan.js';
 import { PlumbElement } from '../plumb-element.js';
-import { CampaignElement } from '../shared/campaign-element.js';
+import { DrawingElement } from '../shared/drawing-element.js';
 import { quantityText } from '../shared/number.js';
 import { richText } from '../shared/rich-text.js';
 import { WidthController } from '../shared/width-controller.js';
@@ -43,7 +43,7 @@ const MOST_BESIDE = 8;
  * @csspart figure The drawing.
  * @csspart provenance The line that says who computed it and when.
  * @cssproperty [--plumb-paper] Ground; likewise `--plumb-ink` and the other colours. */
-export class PlumbSection extends CampaignElement {
+export class PlumbSection extends DrawingElement {
   static override properties: PropertyDeclarations = {
     pointed: { state: true },
     glass: { state: true },
@@ -81,6 +81,7 @@ export class PlumbSection extends CampaignElement {
       width,
       ...MARGINS[layout],
       narrow: layout === 'narrow',
+      low: this.bare,
       underLoupe: (scale) => {
         const subject = subjectOf(found, prediction.links, { inHand, chosen: this.glass }, scale);
         return layout === 'wide' && subject?.kind === 'tie' ? subject.clock.id : null;
@@ -341,6 +342,9 @@ export class PlumbSection extends CampaignElement {
               : held?.from === subject.clock.id || held?.to === subject.clock.id,
         })
       : null;
+    if (this.bare)
+      return html`${sectionPlate({ ...drawn, subject: null }, null, this.#options(drawn), this.#on)}
+        ${sectionKey(plan, answered.campaign, found.scaleGravity, drawn.inHand)} ${without}`;
     const tie = subject?.kind === 'tie' ? subject.clock : null;
     return html`<p class="say">${richText(words.sentence(found, tie))}</p>
       ${sectionPlate(drawn, glass, this.#options(drawn), this.#on)} ${this.#readingLine(drawn)} ${layout === 'wide' && !this.asTable ? nothing : this.#detail(drawn, glass)}

@@ -20,6 +20,11 @@ export abstract class CampaignElement extends PlumbElement {
     this.link = null;
   }
 
+  /** Whether the line below says who computed it and when. */
+  protected get signed(): boolean {
+    return true;
+  }
+
   /** What the element shows of a campaign that can be computed. */
   protected abstract answered(answered: AnsweredCampaign): TemplateResult;
 
@@ -38,7 +43,7 @@ export abstract class CampaignElement extends PlumbElement {
   #shown(answered: AnsweredCampaign): TemplateResult {
     try {
       return html`${this.answered(answered)}
-        <p class="by" part="provenance">${sentenceCase(computedBy())}.</p>`;
+        ${!this.signed ? nothing : html`<p class="by" part="provenance">${sentenceCase(computedBy())}.</p>`}`;
     } catch (error) {
       // what this element asks for, the campaign may lack: a window, for one
       if (!(error instanceof CampaignError)) throw error;

@@ -81,8 +81,8 @@ export const sharedStyles = css`
   .key-row {
     display: flex;
     flex-wrap: wrap;
-    gap: 10px 28px;
-    margin: 20px 0 0;
+    gap: var(--plumb-key-gap, 10px 28px);
+    margin: var(--plumb-key-margin, 20px 0 0);
     padding: 0;
     list-style: none;
     font-family: var(--p-font-figure);

@@ -5,7 +5,7 @@ import { formatDuration, formatLength } from '../../lib/quantity/index.js';
 import { sizeText } from '../../lib/report/numbers.js';
 import { instantText } from '../charts/time-axis.js';
 import { PlumbElement } from '../plumb-element.js';
-import { CampaignElement } from '../shared/campaign-element.js';
+import { DrawingElement } from '../shared/drawing-element.js';
 import { alignedNumber, pointColumn, quantityText } from '../shared/number.js';
 import { num, plainText, type RichText, richText, word } from '../shared/rich-text.js';
 import { warningList } from '../shared/warnings.js';
@@ -42,7 +42,7 @@ const MOST_CURVES = 4;
  * @csspart figure The curves.
  * @csspart provenance The line that says who computed it and when.
  * @cssproperty [--plumb-paper] Ground; likewise `--plumb-ink` and the other colours. */
-export class PlumbTide extends CampaignElement {
+export class PlumbTide extends DrawingElement {
   static override properties: PropertyDeclarations = { cursor: { state: true } };
   static override styles: CSSResultGroup = [PlumbElement.styles, tideStyles];
 
@@ -197,8 +197,7 @@ export class PlumbTide extends CampaignElement {
     const say = this.#sentence(answer, spoken, campaign.targetM);
     const height = width < 656 ? 216 : 260;
     const { cursor } = this;
-    return html`<p class="say">${richText(say)}</p>
-      <svg
+    const drawing = html`<svg
         class="fig"
         part="figure"
         width=${width}
@@ -213,7 +212,19 @@ export class PlumbTide extends CampaignElement {
         @keydown=${(event: KeyboardEvent) => this.#step(event, times.length)}
       >
         ${tideFigure({ width, times, curves, cursor, millimetresPerUnit: spoken.lengthPerOffset * 1e-15 })}
-      </svg>
+      </svg>`;
+    const key = html`<ul class="key-row">
+        ${drawn.map(
+          ({ id, rms }) => html`<li class=${id === inHand ? 'in-hand' : ''}>
+            <svg width="44" height="12" aria-hidden="true"><path d="M0 6H44" class=${tideLine({ held: id === inHand, spoken: id === spoken.id })} /></svg>
+            ${id}, rms ${sizeText(rms * 1e18)}e-18${id === inHand ? ', in hand' : ''}
+          </li>`,
+        )}
+        ${ordered.length > drawn.length ? html`<li>${ordered.length - drawn.length} more links in the table</li>` : nothing}
+      </ul>`;
+    if (this.bare) return html`${drawing} ${key}`;
+    return html`<p class="say">${richText(say)}</p>
+      ${drawing}
       <p class="reading" aria-live="polite">
         ${
           cursor === null
@@ -226,15 +237,7 @@ export class PlumbTide extends CampaignElement {
                 )}`
         }
       </p>
-      <ul class="key-row">
-        ${drawn.map(
-          ({ id, rms }) => html`<li class=${id === inHand ? 'in-hand' : ''}>
-            <svg width="44" height="12" aria-hidden="true"><path d="M0 6H44" class=${tideLine({ held: id === inHand, spoken: id === spoken.id })} /></svg>
-            ${id}, rms ${sizeText(rms * 1e18)}e-18${id === inHand ? ', in hand' : ''}
-          </li>`,
-        )}
-        ${ordered.length > drawn.length ? html`<li>${ordered.length - drawn.length} more links in the table</li>` : nothing}
-      </ul>
+      ${key}
       ${this.#table(answer, inHand)} ${warningList(answer.warnings)}
       <p class="note">
         Add <i class="s">y</i> to the offset of the mean tide to get what the clocks feel at an instant; subtract it from a measured

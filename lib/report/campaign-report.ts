@@ -61,6 +61,7 @@ export function campaignReport(
   const planned = planReport(plan, campaign, common);
   const tides = tide && tideReport(tide, common);
   const of = (report: Report, ...ids: readonly string[]) => report.tables.filter(({ id }) => ids.includes(id));
+  const named = shortly(campaign);
   const chapters: Chapter[] = [
     {
       id: 'uncertainty' as const,
@@ -98,7 +99,10 @@ export function campaignReport(
       tables: [inputsTable(solved.model), sourcesTable(campaign), remarksTable(campaign)],
     },
   ]
-    .map((chapter) => ({ ...chapter, tables: chapter.tables.filter(({ rows }) => rows.length > 0) }))
+    .map((chapter) => ({
+      ...chapter,
+      tables: chapter.tables.filter(({ rows }) => rows.length > 0).map(withoutOptions),
+    }))
     .filter(({ tables, sentences }) => tables.length > 0 || sentences.length > 0);
   return {
     title: campaign.title ?? options.title,
@@ -109,7 +113,7 @@ export function campaignReport(
     cautions: distinct([predicted, compared, planned, tides].flatMap((report) => report?.cautions ?? [])),
     provenance: options.provenance,
     limits: prediction.links.flatMap((link) =>
-      link.y && link.budget.length > 0 ? [{ link: link.id, shares: largestShares(campaign, link) }] : [],
+      link.y && link.budget.length > 0 ? [{ link: link.id, shares: largestShares(named, link) }] : [],
     ),
     care: CARE_NOTES,
     chapters,
@@ -137,7 +141,12 @@ function answerSentences({ links }: Prediction, evaluation: Evaluation | null): 
       `Of ${compared.length} measurements ${count('agree')} agree, ${count('differ')} differ, ${count('inconclusive')} could not have told.`,
     ];
   }
-  if (compared.length > 0) return compared.map((link) => comparedSentence(link, evaluation!.effectM));
+  if (compared.length > 0) {
+    const several = (id: string) => compared.filter((link) => link.id === id).length > 1;
+    return compared.map((link) =>
+      comparedSentence(several(link.id) ? `${link.id} (${link.measurement})` : link.id, link, evaluation!.effectM),
+    );
+  }
   const known = links.filter(({ dH }) => dH !== null);
   if (known.length > MOST_SENTENCES || known.length === 0) {
     const worst = known.reduce<LinkPrediction | null>(
@@ -154,7 +163,8 @@ function answerSentences({ links }: Prediction, evaluation: Evaluation | null): 
 }
 
 function comparedSentence(
-  { id, verdict, smallestDetectableM, residualLength, suspects }: LinkEvaluation,
+  id: string,
+  { verdict, smallestDetectableM, residualLength, suspects }: LinkEvaluation,
   effectM: number | null,
 ): string {
   if (!residualLength || smallestDetectableM === null) return `${id} is not computed: its ends have no common level.`;
@@ -173,6 +183,20 @@ function comparedSentence(
         : `${fits} mistakes would each explain it`;
   return `${id} differs from its prediction by ${formatLength(Math.abs(residualLength.value), 2)}; ${mistakes}.`;
 }
+
+/** Options of the command line say nothing on paper. */
+const withoutOptions = (table: Table): Table => ({
+  ...table,
+  notes: table.notes.filter((note) => !/(^|\s)--\w/.test(note)),
+});
+
+/** Names up to their first comma: the first page has no room for more. */
+const shortly = (campaign: Campaign): Campaign => ({
+  ...campaign,
+  sites: campaign.sites.map((site) =>
+    site.name === undefined ? site : { ...site, name: site.name.split(',')[0]!.trim() },
+  ),
+});
 
 const largestShares = (campaign: Campaign, { budget }: LinkPrediction): string[] =>
   budget
