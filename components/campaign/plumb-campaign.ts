@@ -1,5 +1,6 @@
 import { type CSSResultGroup, html, nothing, type PropertyValues, type TemplateResult } from 'lit';
 import { CampaignError, type Fault, faultAt } from '../../lib/campaign/fault.js';
+import { hasFragment, readFragment } from '../../lib/campaign/fragment.js';
 import { withPlaces } from '../../lib/campaign/locate.js';
 import { readCampaign } from '../../lib/campaign/read.js';
 import { PlumbElement } from '../plumb-element.js';
@@ -19,7 +20,7 @@ const MAX_WARNINGS = 3;
 /** Holds a campaign for the elements inside it and shows in place what is wrong with the file.
  *
  *  `<plumb-campaign src="campaign.json"><plumb-links></plumb-links></plumb-campaign>`, or the campaign itself in a child
- *  `<script type="application/json">`, which also works from disk.
+ *  `<script type="application/json">`, which also works from disk; with `fragment` from behind the # of the page's address.
  *
  * @slot The elements that show the campaign.
  * @fires plumb-select A reader has taken a link in hand; detail: `link`, its id or null.
@@ -29,6 +30,7 @@ export class PlumbCampaign extends PlumbElement {
   static override properties = {
     src: { type: String },
     link: { type: String },
+    fragment: { type: Boolean },
     allWarnings: { state: true },
     slow: { state: true },
   };
@@ -38,6 +40,8 @@ export class PlumbCampaign extends PlumbElement {
   declare src: string | null;
   /** Id of the link in hand at first; a reader may take another one. */
   declare link: string | null;
+  /** Takes the campaign, and the link in hand, from behind the # of the page's address. */
+  declare fragment: boolean;
   declare allWarnings: boolean;
   declare slow: boolean;
 
@@ -47,12 +51,13 @@ export class PlumbCampaign extends PlumbElement {
   #lastGood: AnsweredCampaign | null = null;
   #loading: AbortController | null = null;
   #faultsAreLate = false;
-  #lastLoad: { src: string | null; inline: string | null } | null = null;
+  #lastLoad: { src: string | null; inline: string | null; hash: string | null } | null = null;
 
   constructor() {
     super();
     this.src = null;
     this.link = null;
+    this.fragment = false;
     this.allWarnings = false;
     this.slow = false;
   }
@@ -68,6 +73,7 @@ export class PlumbCampaign extends PlumbElement {
     // a script may run before the parser has reached the children
     if (document.readyState === 'loading')
       document.addEventListener('DOMContentLoaded', () => this.#load(), { once: true });
+    window.addEventListener('hashchange', this.#followAddress);
     this.#provider.announce();
     if (this.hasUpdated) this.#load();
   }
@@ -75,13 +81,18 @@ export class PlumbCampaign extends PlumbElement {
   override disconnectedCallback(): void {
     super.disconnectedCallback();
     this.#observer.disconnect();
+    window.removeEventListener('hashchange', this.#followAddress);
     this.#loading?.abort();
   }
 
   protected override willUpdate(changed: PropertyValues): void {
     if (changed.has('link')) this.#provider.inHand = this.link;
-    if (changed.has('src') || !this.hasUpdated) this.#load();
+    if (changed.has('src') || changed.has('fragment') || !this.hasUpdated) this.#load();
   }
+
+  readonly #followAddress = (): void => {
+    if (this.fragment) this.#load();
+  };
 
   #inlineText(): string | null {
     const script = [...this.children].find(
@@ -93,11 +104,15 @@ export class PlumbCampaign extends PlumbElement {
   #load(): void {
     const inline = this.#inlineText();
     const { src } = this;
-    if (this.#lastLoad && this.#lastLoad.src === src && this.#lastLoad.inline === inline) return;
-    this.#lastLoad = { src, inline };
+    const hash = this.fragment && hasFragment(location.hash) ? location.hash : null;
+    const last = this.#lastLoad;
+    if (last && last.src === src && last.inline === inline && last.hash === hash) return;
+    this.#lastLoad = { src, inline, hash };
     this.#loading?.abort();
     this.#loading = null;
-    if (inline !== null && src) {
+    // what a reader was sent wins over what the page would show without it
+    if (hash !== null) this.#takeFragment(hash);
+    else if (inline !== null && src) {
       this.#fail(null, [faultAt('two-campaigns', 'src', src, 'either src or a campaign inside the element, not both')]);
     } else if (inline !== null) this.#take(inline);
     else if (src) void this.#fetch(src);
@@ -131,6 +146,17 @@ export class PlumbCampaign extends PlumbElement {
     } finally {
       clearTimeout(timer);
       if (loading === this.#loading) this.slow = false;
+    }
+  }
+
+  #takeFragment(hash: string): void {
+    try {
+      const state = readFragment(hash)!;
+      this.#take(state.campaign);
+      if (state.link !== null) this.#provider.inHand = state.link;
+    } catch (error) {
+      if (!(error instanceof CampaignError)) throw error;
+      this.#fail(null, error.faults);
     }
   }
 

@@ -19,6 +19,7 @@ import { formatConcise, formatScaled } from '../../lib/quantity/index.js';
 import { verdictSentence } from '../../lib/report/evaluation-report.js';
 import { limitSentence } from '../../lib/report/limit.js';
 import { shareScale } from '../charts/share-bar.js';
+import type { PlumbMove } from '../map/plumb-map.js';
 import { PlumbElement } from '../plumb-element.js';
 import { quantityText } from '../shared/number.js';
 import { computedBy } from '../shared/provenance.js';
@@ -113,6 +114,7 @@ export class PlumbDesk extends PlumbElement {
     this.addEventListener('plumb-select', (event) => {
       this.link = event.detail.link;
     });
+    this.addEventListener('plumb-move', (event) => this.#moveSite(event.detail));
   }
 
   override connectedCallback(): void {
@@ -596,7 +598,20 @@ export class PlumbDesk extends PlumbElement {
   /** The other sides of the campaign, whole, under the tables. */
   #plates(): TemplateResult | typeof nothing {
     if (!this.#answered || this.#answered.campaign.links.length === 0) return nothing;
-    return html`<plumb-section></plumb-section><plumb-links></plumb-links><plumb-budget></plumb-budget><plumb-network></plumb-network>`;
+    return html`<plumb-section></plumb-section><plumb-links></plumb-links><plumb-budget></plumb-budget>
+      <plumb-averaging></plumb-averaging><plumb-map editable></plumb-map>
+      ${this.#answered.campaign.window ? html`<plumb-tide></plumb-tide>` : nothing} <plumb-network></plumb-network>
+      <plumb-copy show="section,links,budget"></plumb-copy>`;
+  }
+
+  /** A site dragged on the map: one change, one undo. Heights do not follow. */
+  #moveSite({ site, latitude, longitude }: PlumbMove): void {
+    const index = itemsOf(this.file, 'sites').findIndex((one) => isObject(one) && one['id'] === site);
+    const value = itemsOf(this.file, 'sites')[index];
+    if (!isObject(value)) return;
+    if (value['lat'] === undefined || value['lon'] === undefined)
+      this.notice = `Site ${site} has its place in a coordinate system of its own: change it in its row.`;
+    else this.#edit({ kind: 'set', path: ['sites', index], value: { ...value, lat: latitude, lon: longitude } });
   }
 
   #toggleJson(): void {

@@ -1,14 +1,10 @@
 import { type CSSResultGroup, html, nothing, type TemplateResult } from 'lit';
-import { evaluationOf } from '../../lib/answers/evaluate.js';
-import { planOf } from '../../lib/answers/plan.js';
 import type { Prediction } from '../../lib/answers/prediction.js';
-import { tide } from '../../lib/answers/tide.js';
 import type { Campaign } from '../../lib/campaign/campaign.js';
-import { CampaignError } from '../../lib/campaign/fault.js';
 import { W0_IHRS } from '../../lib/constants/defining-constants.js';
 import { version } from '../../lib/constants/version.js';
 import { formatConcise, formatInstant, formatLength } from '../../lib/quantity/index.js';
-import { type CampaignReport, type Chapter, campaignReport } from '../../lib/report/campaign-report.js';
+import type { CampaignReport, Chapter } from '../../lib/report/campaign-report.js';
 import { type LinkRow, linkRows, NONE } from '../links/link-rows.js';
 import { shortReason } from '../links/links-words.js';
 import { PlumbElement } from '../plumb-element.js';
@@ -18,32 +14,9 @@ import { computedBy } from '../shared/provenance.js';
 import { reportTable } from '../shared/report-table.js';
 import { richText } from '../shared/rich-text.js';
 import { warningList } from '../shared/warnings.js';
-import { oncePerCampaign, solvedOf } from '../state/answers.js';
 import type { AnsweredCampaign } from '../state/campaign-context.js';
+import { answersFor, reportOf } from './report-of.js';
 import { reportStyles } from './report-styles.js';
-
-/** Samples of the tide for its statistics: one an hour. */
-const TIDE_STEP_S = 3600;
-
-const reportFor = oncePerCampaign((campaign: Campaign) => {
-  const solved = solvedOf(campaign);
-  const measured = campaign.measurements.some(({ check }) => !check);
-  return {
-    evaluation: measured ? evaluationOf(solved) : null,
-    plan: planOf(solved),
-    tide: campaign.window ? tideOf(campaign) : null,
-  };
-});
-
-/** A window that the tide cannot be computed for is said by the tide's own element; the report stands without it. */
-function tideOf(campaign: Campaign) {
-  try {
-    return tide(campaign, TIDE_STEP_S);
-  } catch (error) {
-    if (error instanceof CampaignError) return null;
-    throw error;
-  }
-}
 
 /** The whole campaign as a page to print. The first sheet holds question, answer, section, links, what limits and what to bear in
  *  mind; the inputs follow on the last. Nothing is in hand on paper, so nothing is in accent.
@@ -83,7 +56,7 @@ export class PlumbReport extends CampaignElement {
   }
 
   #links({ campaign, prediction }: AnsweredCampaign): TemplateResult {
-    const { evaluation, plan } = reportFor(campaign);
+    const { evaluation, plan } = answersFor(campaign);
     const rows = linkRows(campaign, prediction, evaluation);
     const keys = evaluation
       ? (['length', 'potential', 'offset', 'measured', 'differenceLength'] as const)
@@ -176,11 +149,8 @@ export class PlumbReport extends CampaignElement {
   }
 
   protected override answered(answered: AnsweredCampaign): TemplateResult {
-    const { campaign, prediction, warnings } = answered;
-    const report = campaignReport(
-      { solved: solvedOf(campaign), prediction, ...reportFor(campaign) },
-      { title: 'Campaign', provenance: computedBy() },
-    );
+    const { campaign, warnings } = answered;
+    const report = reportOf(answered, computedBy());
     const chapters = report.chapters.map((chapter, i) => ({ chapter, number: i + 5 }));
     // the inputs have a sheet of their own
     const sheets = [

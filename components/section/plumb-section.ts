@@ -1,33 +1,20 @@
 import { type CSSResultGroup, html, nothing, type PropertyDeclarations, type TemplateResult } from 'lit';
-import { section, tieShare } from '../../lib/answers/section.js';
+import { tieShare } from '../../lib/answers/section.js';
 import { linkLineClass, linkLineStyles } from '../charts/link-line.js';
-import { sectionPlan } from '../charts/section-plan.js';
 import { PlumbElement } from '../plumb-element.js';
 import { DrawingElement } from '../shared/drawing-element.js';
 import { quantityText } from '../shared/number.js';
 import { richText } from '../shared/rich-text.js';
 import { WidthController } from '../shared/width-controller.js';
-import { oncePerCampaign, solvedOf } from '../state/answers.js';
 import type { AnsweredCampaign } from '../state/campaign-context.js';
+import { drawnOf, sectionOf } from './section-drawn.js';
 import { type FigureOptions, type Mark, markKey } from './section-figure.js';
 import { sectionKey } from './section-key.js';
 import { type Loupe, loupe } from './section-loupe.js';
-import {
-  type Drawn,
-  glassBelow,
-  layoutOf,
-  MARGINS,
-  MOST_ACROSS,
-  MOST_WIDTH_PX,
-  sectionPlate,
-  zeroWords,
-} from './section-plate.js';
+import { type Drawn, glassBelow, sectionPlate } from './section-plate.js';
 import { sectionStyles } from './section-styles.js';
-import { subjectOf } from './section-subject.js';
 import { scaleTable, sectionTable, tieTable } from './section-tables.js';
 import * as words from './section-words.js';
-
-const sectionOf = oncePerCampaign((campaign) => section(solvedOf(campaign)));
 
 /** Links listed below the plate because their labels would meet; with more the table is the place. */
 const MOST_BESIDE = 8;
@@ -65,58 +52,6 @@ export class PlumbSection extends DrawingElement {
     this.pointed = null;
     this.glass = null;
     this.asTable = false;
-  }
-
-  // --- what is drawn
-
-  #drawn({ campaign, prediction }: AnsweredCampaign, inHand: string | null): Drawn {
-    const found = sectionOf(campaign);
-    const width = Math.min(this.#width.width, MOST_WIDTH_PX);
-    const widest = layoutOf(width);
-    const layout = widest === 'wide' && found.sites.length > MOST_ACROSS ? 'middle' : widest;
-    const stated = new Map(campaign.links.map((link) => [link.id, link]));
-    const plan = sectionPlan({
-      section: found,
-      inHand,
-      width,
-      ...MARGINS[layout],
-      narrow: layout === 'narrow',
-      low: this.bare,
-      underLoupe: (scale) => {
-        const subject = subjectOf(found, prediction.links, { inHand, chosen: this.glass }, scale);
-        return layout === 'wide' && subject?.kind === 'tie' ? subject.clock.id : null;
-      },
-      zeroLabel: `W0 ${zeroWords(found, layout)}`,
-      leftOut: (potential) => words.leftOut(potential, found.scaleGravity, layout === 'narrow'),
-      siteLines: (site) =>
-        layout === 'narrow'
-          ? [site.id]
-          : [words.shortName(site.name), `W ${words.siteW(site)}`, `C ${words.siteC(site)} m²/s²`],
-      links: prediction.links.flatMap((link) => {
-        const texts = words.linkTexts(link);
-        return texts && link.dW
-          ? [
-              {
-                id: link.id,
-                from: link.from,
-                to: link.to,
-                uPotential: link.dW.u,
-                lines: [words.linkHead(stated.get(link.id)!), `y ${texts.offset}e-18`, `${texts.length} m`],
-              },
-            ]
-          : [];
-      }),
-    });
-    const links = prediction.links;
-    return {
-      campaign,
-      section: found,
-      links,
-      inHand,
-      layout,
-      plan,
-      subject: subjectOf(found, links, { inHand, chosen: this.glass }, plan.scale),
-    };
   }
 
   // --- what a reader does
@@ -328,7 +263,12 @@ export class PlumbSection extends DrawingElement {
     if (found.sites.length === 0)
       return html`<p class="say">${richText(words.sentence(found, null))}</p>
         ${without}`;
-    const drawn = this.#drawn(answered, this.linkInHand(answered));
+    const drawn = drawnOf(answered, {
+      inHand: this.linkInHand(answered),
+      chosen: this.glass,
+      width: this.#width.width,
+      bare: this.bare,
+    });
     const { plan, subject, layout } = drawn;
     const held = drawn.links.find(({ id }) => id === drawn.inHand);
     const glass = subject

@@ -79,6 +79,22 @@ export const tokens = css`
     line-height: 1.5;
     font-variant-numeric: lining-nums tabular-nums;
     text-rendering: optimizeLegibility;
+    /* what a page hands down to all it holds, and what would bend tables and lettering */
+    direction: ltr;
+    text-align: left;
+    text-indent: 0;
+    text-transform: none;
+    text-shadow: none;
+    letter-spacing: normal;
+    word-spacing: normal;
+    white-space: normal;
+    word-break: normal;
+    overflow-wrap: normal;
+    hyphens: manual;
+    font-style: normal;
+    font-weight: 400;
+    font-stretch: normal;
+    border-spacing: 0;
     container: plumb / inline-size;
   }
 
